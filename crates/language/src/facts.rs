@@ -1,0 +1,100 @@
+//! What the language needs to know from outside a text: the columns of the real file, the values
+//! of the real answers. The session implements it; tests implement it with made-up facts.
+
+/// A page of the manual: what hover, completion, `explain` and the reference all show.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Page {
+    /// The word that it explains.
+    pub name: &'static str,
+    /// One line.
+    pub summary: &'static str,
+    /// The whole page, in Markdown, headed by the name.
+    pub text: &'static str,
+}
+
+/// What kind of column.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum ColumnKind {
+    /// Every value that is not missing is a number.
+    Number,
+    /// Anything else.
+    Text,
+}
+
+/// A column as an editor shows it.
+#[derive(Clone, Debug, PartialEq)]
+pub struct ColumnFact {
+    /// Its name in the file, or as derived.
+    pub name: String,
+    /// Its kind.
+    pub kind: ColumnKind,
+    /// One line: label, unit, range or levels, missing values.
+    pub detail: String,
+}
+
+/// A key that may come next in a live-value path.
+#[derive(Clone, Debug, PartialEq)]
+pub struct KeyFact {
+    /// The key, without back-quotes.
+    pub key: String,
+    /// What stands there: a value or citation as prose would print it, or what the key leads to.
+    pub detail: String,
+}
+
+/// Facts from outside the text. Every answer is an option: a file may be missing, an analysis
+/// impossible, and the text is edited all the same.
+pub trait Facts {
+    /// Pages of the views.
+    fn views(&self) -> &[Page];
+    /// Pages of the functions that an expression may call.
+    fn functions(&self) -> &[Page];
+    /// Pages of the built-in samples.
+    fn samples(&self) -> &[Page];
+    /// The columns of a table.
+    fn columns(&self, table: &str) -> Option<Vec<ColumnFact>>;
+    /// The levels of a column, in their order.
+    fn levels(&self, table: &str, column: &str) -> Option<Vec<String>>;
+    /// Which keys may follow the first segments of a path (which begin with a comparison).
+    fn keys(&self, path: &[String]) -> Vec<KeyFact>;
+    /// The value or citation at a path, as prose would print it.
+    fn value(&self, path: &[String]) -> Option<String>;
+    /// The values of a coefficient kind (`raw`, `standardized`, `structure`, `share`) in a
+    /// comparison, as a small Markdown table.
+    fn coefficients(&self, comparison: &str, kind: &str) -> Option<String>;
+    /// Data files near the document whose path starts with `prefix`.
+    fn files(&self, prefix: &str) -> Vec<String>;
+}
+
+/// No facts at all, as for a text that belongs to no file.
+#[derive(Clone, Copy, Debug, Default)]
+pub struct NoFacts;
+
+impl Facts for NoFacts {
+    fn views(&self) -> &[Page] {
+        &[]
+    }
+    fn functions(&self) -> &[Page] {
+        &[]
+    }
+    fn samples(&self) -> &[Page] {
+        &[]
+    }
+    fn columns(&self, _: &str) -> Option<Vec<ColumnFact>> {
+        None
+    }
+    fn levels(&self, _: &str, _: &str) -> Option<Vec<String>> {
+        None
+    }
+    fn keys(&self, _: &[String]) -> Vec<KeyFact> {
+        Vec::new()
+    }
+    fn value(&self, _: &[String]) -> Option<String> {
+        None
+    }
+    fn coefficients(&self, _: &str, _: &str) -> Option<String> {
+        None
+    }
+    fn files(&self, _: &str) -> Vec<String> {
+        Vec::new()
+    }
+}

@@ -1,0 +1,10 @@
+//! The Tussock language: from text to tree to model, and what an editor needs of it.
+//!
+//! No I/O, no protocol: byte offsets and strings. The parser never fails; half-typed text is
+//! normal input.
+
+pub mod ast;
+pub mod diagnostic;
+pub mod document;
+pub mod facts;
+pub mod span;

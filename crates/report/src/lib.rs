@@ -1,0 +1,6 @@
+//! Typed tables and paragraphs, and their renderers. No statistics, no protocols; numbers keep full
+//! precision until they are rendered.
+
+pub mod rich;
+pub mod table;
+pub mod value;
