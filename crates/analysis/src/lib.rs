@@ -3,5 +3,6 @@
 //! No text, no files, no data frames, no rendering, no global state. Every procedure takes matrices
 //! and indices and returns a named struct, or an error that says which group, outcome or row.
 
+pub mod distribution;
 pub mod error;
 pub mod test;

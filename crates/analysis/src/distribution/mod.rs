@@ -1,0 +1,1 @@
+//! Distributions: tails on the log scale, limits of noncentrality.
