@@ -7,4 +7,5 @@ pub mod ast;
 pub mod diagnostic;
 pub mod document;
 pub mod facts;
+pub mod present;
 pub mod span;
