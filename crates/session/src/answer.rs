@@ -23,6 +23,8 @@ pub enum Output {
     Paragraph(Rich),
     /// A word on what a definition defined, for a notebook; documents leave it out.
     Note(Rich),
+    /// What a `{{ }}` in a document's prose stands for; its location is that of the braces.
+    Value(Rich),
     /// What is wrong or worth knowing.
     Problem(Diagnostic),
 }
@@ -47,7 +49,7 @@ impl Answers {
     pub fn problems(&self) -> impl Iterator<Item = &Diagnostic> {
         self.list.iter().filter_map(|answer| match &answer.output {
             Output::Problem(problem) => Some(problem),
-            Output::Table(_) | Output::Paragraph(_) | Output::Note(_) => None,
+            Output::Table(_) | Output::Paragraph(_) | Output::Note(_) | Output::Value(_) => None,
         })
     }
 }
