@@ -10,4 +10,5 @@ pub mod facts;
 pub mod nearest;
 pub mod present;
 pub mod span;
+
 pub mod terms;
