@@ -10,5 +10,4 @@ pub mod facts;
 pub mod nearest;
 pub mod present;
 pub mod span;
-
 pub mod terms;
