@@ -3,6 +3,18 @@
 //! No text, no files, no data frames, no rendering, no global state. Every procedure takes matrices
 //! and indices and returns a named struct, or an error that says which group, outcome or row.
 
+pub mod centroids;
+pub mod coefficients;
+pub mod correlations;
+pub mod covariances;
+pub mod criteria;
+pub mod descriptives;
 pub mod distribution;
 pub mod error;
+pub mod functions;
+pub mod hypothesis;
+pub mod multiplicity;
+pub mod pairs;
+pub mod sample;
 pub mod test;
+pub mod univariate;
