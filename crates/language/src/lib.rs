@@ -7,6 +7,7 @@ pub mod ast;
 pub mod diagnostic;
 pub mod document;
 pub mod facts;
+pub mod names;
 pub mod nearest;
 pub mod present;
 pub mod span;

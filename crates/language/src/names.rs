@@ -1,0 +1,44 @@
+//! Names as they are written.
+
+/// Whether a name may stand without back-quotes: a letter or `_`, then letters, digits, `_`.
+#[must_use]
+pub fn is_plain(name: &str) -> bool {
+    let mut characters = name.chars();
+    characters.next().is_some_and(|first| first.is_alphabetic() || first == '_')
+        && characters.all(|c| c.is_alphanumeric() || c == '_')
+}
+
+/// A name as it must be written: as it is, or in back-quotes.
+#[must_use]
+pub fn quoted(name: &str) -> String {
+    if is_plain(name) { name.to_owned() } else { format!("`{name}`") }
+}
+
+/// The segments of a path joined by dots, each as it must be written; numbers stand bare.
+#[must_use]
+pub fn dotted(segments: &[String]) -> String {
+    let written = |segment: &String| {
+        let is_number = !segment.is_empty() && segment.chars().all(|c| c.is_ascii_digit());
+        if is_number { segment.clone() } else { quoted(segment) }
+    };
+    segments.iter().map(written).collect::<Vec<_>>().join(".")
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn only_names_that_need_it_are_quoted() {
+        assert_eq!(quoted("größe_2"), "größe_2");
+        assert_eq!(quoted("Reaction time (ms)"), "`Reaction time (ms)`");
+        assert_eq!(quoted("2nd"), "`2nd`");
+        assert_eq!(quoted(""), "``");
+    }
+
+    #[test]
+    fn numbers_in_a_path_stand_bare() {
+        let path = ["main", "centroids", "fixed day", "1", "mean"].map(str::to_owned);
+        assert_eq!(dotted(&path), "main.centroids.`fixed day`.1.mean");
+    }
+}
