@@ -14,9 +14,30 @@ pub enum AnalysisError {
         /// Group codes.
         groups: usize,
     },
+    /// No outcomes at all.
+    #[error("there are no outcomes")]
+    NoOutcomes,
+    /// A group code beyond the number of groups.
+    #[error("row {row} has group code {code}, but there are {groups} groups")]
+    GroupCode {
+        /// Index of the row.
+        row: usize,
+        /// Its code.
+        code: usize,
+        /// Number of groups.
+        groups: usize,
+    },
     /// A value is infinite or not a number.
     #[error("outcome {outcome} is not finite in row {row}")]
     NotFinite {
+        /// Index of the outcome.
+        outcome: usize,
+        /// Index of the row.
+        row: usize,
+    },
+    /// A value too large to be squared.
+    #[error("outcome {outcome} is beyond 1e150 in row {row}")]
+    TooLarge {
         /// Index of the outcome.
         outcome: usize,
         /// Index of the row.
@@ -74,7 +95,9 @@ pub enum AnalysisError {
         group: usize,
     },
     /// More outcomes than degrees of freedom for error.
-    #[error("{outcomes} outcomes need at least as many degrees of freedom for error, here are {df_error}")]
+    #[error(
+        "{outcomes} outcomes need at least as many degrees of freedom for error, here are {df_error}"
+    )]
     TooManyOutcomes {
         /// How many outcomes.
         outcomes: usize,
