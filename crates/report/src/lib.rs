@@ -3,6 +3,7 @@
 
 pub mod citation;
 pub mod number;
+pub mod page;
 pub mod render;
 pub mod rich;
 pub mod table;

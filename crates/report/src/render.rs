@@ -1,4 +1,4 @@
-//! The renderers. Each format is one file here and one line
+//! The renderers. Each format is one file here, with a second one for whole documents, and one line
 //! in [`FORMATS`].
 
 pub mod html;
@@ -6,6 +6,14 @@ pub mod json;
 pub mod markdown;
 pub mod text;
 
+mod page_html;
+mod page_json;
+mod page_markdown;
+mod page_text;
+mod prose;
+mod unbreakable;
+
+use crate::page::Page;
 use crate::table::Table;
 
 /// A format that tables and documents can be rendered to.
@@ -19,6 +27,8 @@ pub struct Format {
     pub extension: &'static str,
     /// Renders one table.
     pub table: fn(&Table) -> String,
+    /// Renders a whole document.
+    pub page: fn(&Page) -> String,
 }
 
 /// Every format.

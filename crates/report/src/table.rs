@@ -386,15 +386,10 @@ impl From<Value> for Placed {
     }
 }
 
-/// A back-quote within back-quotes is written twice.
 fn path_segment(segment: &str) -> String {
     let is_number = !segment.is_empty() && segment.bytes().all(|byte| byte.is_ascii_digit());
     let mut characters = segment.chars();
     let is_name = characters.next().is_some_and(|first| first == '_' || first.is_alphabetic())
         && characters.all(|character| character == '_' || character.is_alphanumeric());
-    if is_number || is_name {
-        segment.to_owned()
-    } else {
-        format!("`{}`", segment.replace('`', "``"))
-    }
+    if is_number || is_name { segment.to_owned() } else { format!("`{segment}`") }
 }

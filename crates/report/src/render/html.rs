@@ -8,14 +8,21 @@
 use maud::{Markup, html};
 
 use super::Format;
+use super::page_html;
 use crate::table::{Cell, ColumnKind, Placed, Row, Spanner, Table};
 
 /// HTML, for notebooks and the web.
-pub const FORMAT: Format =
-    Format { name: "html", media_type: "text/html", extension: "html", table };
+pub const FORMAT: Format = Format {
+    name: "html",
+    media_type: "text/html",
+    extension: "html",
+    table,
+    page: page_html::page,
+};
 
 /// Shrinks to the table, so that the notes are no wider than it is.
-const FRAME: &str = "display:inline-block;max-width:100%;margin:0 0 1em;text-align:left";
+const FRAME: &str = "display:inline-block;max-width:100%;text-align:left";
+const OUTER: &str = "margin:0 0 1em";
 const SCROLLER: &str = "overflow-x:auto";
 const TABLE: &str = "border-collapse:collapse;border-spacing:0;border:none;margin:0;width:auto;\
                      min-width:20em;line-height:1.4;font-variant-numeric:tabular-nums lining-nums";
@@ -44,23 +51,29 @@ pub fn table(table: &Table) -> String {
 pub(super) fn fragment(table: &Table) -> Markup {
     html! {
         // The second and third class keep typesetters from reading a dollar sign as a formula.
-        div class="tussock-table tex2jax_ignore mathjax_ignore" style=(FRAME) {
-            div style=(SCROLLER) {
-                table style=(TABLE) {
-                    @if let Some(caption) = table.caption() {
-                        caption style=(CAPTION) { (caption) }
-                    }
-                    (column_groups(table))
-                    (heads(table))
-                    tbody {
-                        @for (index, row) in table.rows.iter().enumerate() {
-                            (body_row(table, row, Position::of(index, table.rows.len())))
-                        }
-                    }
+        div class="tussock-table tex2jax_ignore mathjax_ignore" style=(OUTER) {
+            div style=(FRAME) {
+                div style=(SCROLLER) { (grid(table)) }
+                @if let Some(notes) = table.notes_paragraph() {
+                    p style=(NOTES) { (notes) }
                 }
             }
-            @if let Some(notes) = table.notes_paragraph() {
-                p style=(NOTES) { (notes) }
+        }
+    }
+}
+
+fn grid(table: &Table) -> Markup {
+    html! {
+        table style=(TABLE) {
+            @if let Some(caption) = table.caption() {
+                caption style=(CAPTION) { (caption) }
+            }
+            (column_groups(table))
+            (heads(table))
+            tbody {
+                @for (index, row) in table.rows.iter().enumerate() {
+                    (body_row(table, row, Position::of(index, table.rows.len())))
+                }
             }
         }
     }
@@ -126,7 +139,7 @@ enum HeadPlace {
 fn head(table: &Table, column: usize, place: HeadPlace) -> Markup {
     let top = if place == HeadPlace::Below { "" } else { TOP_RULE };
     let align = alignment(table.kind(column));
-    let padding = padding(table, column, ".35em");
+    let padding = padding(table, column, ".35em", ".35em");
     let style = format!("{CELL};vertical-align:bottom;{top};{HEAD_RULE};{align};padding:{padding}");
     let rows = (place == HeadPlace::Beside).then_some(2);
     let text = table.head(column);
@@ -152,12 +165,17 @@ impl Position {
 }
 
 fn body_row(table: &Table, row: &Row, position: Position) -> Markup {
-    let above = if row.opens_block && !position.is_first { ".9em" } else { ".25em" };
+    let above = match (position.is_first, row.opens_block) {
+        (true, _) => ".4em",
+        (false, true) => ".9em",
+        (false, false) => ".25em",
+    };
+    let below = if position.is_last { ".4em" } else { ".25em" };
     let rule = if position.is_last { BOTTOM_RULE } else { "" };
     html! {
         tr style=(ROW) {
             @for column in 0..table.width() {
-                @let padding = padding(table, column, above);
+                @let padding = padding(table, column, above, below);
                 (body_cell(table.kind(column), row.cells.get(column), &format!("{rule};padding:{padding}")))
             }
         }
@@ -201,8 +219,8 @@ fn alignment(kind: ColumnKind) -> &'static str {
 }
 
 /// The first column begins and the last one ends where the rules do.
-fn padding(table: &Table, column: usize, above: &str) -> String {
+fn padding(table: &Table, column: usize, above: &str, below: &str) -> String {
     let left = if column == 0 { ".15em" } else { ".7em" };
     let right = if column + 1 == table.width() { ".15em" } else { ".7em" };
-    format!("{above} {right} .25em {left}")
+    format!("{above} {right} {below} {left}")
 }

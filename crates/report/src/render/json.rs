@@ -3,13 +3,19 @@
 use serde_json::{Map, Value as Json, json};
 
 use super::Format;
+use super::page_json;
 use crate::rich::Rich;
 use crate::table::{Cell, Column, ColumnKind, Placed, Row, Table};
 use crate::value::NumberStyle;
 
 /// JSON, for programs.
-pub const FORMAT: Format =
-    Format { name: "json", media_type: "application/json", extension: "json", table };
+pub const FORMAT: Format = Format {
+    name: "json",
+    media_type: "application/json",
+    extension: "json",
+    table,
+    page: page_json::page,
+};
 
 /// The table as indented JSON, ending in a line break.
 #[must_use]

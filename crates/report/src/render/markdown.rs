@@ -3,12 +3,18 @@
 use unicode_width::UnicodeWidthStr;
 
 use super::Format;
+use super::page_markdown;
 use crate::rich::{Rich, Style};
 use crate::table::{ColumnKind, Table};
 
 /// Markdown, for documents and issue trackers.
-pub const FORMAT: Format =
-    Format { name: "markdown", media_type: "text/markdown", extension: "md", table };
+pub const FORMAT: Format = Format {
+    name: "markdown",
+    media_type: "text/markdown",
+    extension: "md",
+    table,
+    page: page_markdown::page,
+};
 
 /// The table, ending in a line break.
 ///

@@ -3,14 +3,21 @@
 use unicode_width::UnicodeWidthStr;
 
 use super::Format;
+use super::page_text;
+use crate::render::unbreakable::{NO_BREAK_SPACE, unbreakable};
 use crate::table::{ColumnKind, Table};
 
 /// Plain text, for terminals.
-pub const FORMAT: Format =
-    Format { name: "text", media_type: "text/plain", extension: "txt", table };
+pub const FORMAT: Format = Format {
+    name: "text",
+    media_type: "text/plain",
+    extension: "txt",
+    table,
+    page: page_text::page,
+};
 
 /// Captions and notes are broken into lines of this width, or of the table's own if it is wider.
-const MEASURE: usize = 72;
+pub(super) const MEASURE: usize = 72;
 
 /// What separates two columns.
 const GAP: &str = "   ";
@@ -140,20 +147,25 @@ impl Grid {
     }
 }
 
-/// The text in lines of at most `measure` columns, broken at spaces; a longer word has a line of its
-/// own.
+/// The text in lines of at most `measure` columns, broken at spaces, but not within a statistic such
+/// as `F(8, 290) = 8.52`; a longer piece has a line of its own.
 pub(super) fn wrapped(text: &str, measure: usize) -> Vec<String> {
     let mut lines: Vec<String> = Vec::new();
     let mut line = String::new();
-    for word in text.split(' ').filter(|word| !word.is_empty()) {
-        if !line.is_empty() && line.width() + 1 + word.width() > measure {
+    for piece in unbreakable(text).split(' ').filter(|piece| !piece.is_empty()) {
+        if !line.is_empty() && line.width() + 1 + piece.width() > measure {
             lines.push(std::mem::take(&mut line));
         }
         if !line.is_empty() {
             line.push(' ');
         }
-        line.push_str(word);
+        line.push_str(&piece.replace(NO_BREAK_SPACE, " "));
     }
     lines.push(line);
     lines
+}
+
+/// A line of program text, with what a terminal would obey taken out.
+pub(super) fn code_line(line: &str) -> String {
+    crate::rich::printable(&line.replace('\t', "    ")).trim_end().to_owned()
 }

@@ -5,7 +5,7 @@ use maud::{Markup, Render, html};
 use super::{Rich, Run, Style, printable};
 
 /// Without this a raised or lowered figure pushes the lines of a paragraph apart.
-const ON_THE_LINE: &str = "line-height:0";
+const ON_THE_LINE: &str = "line-height:0;font-size:.75em";
 
 impl Render for Rich {
     fn render(&self) -> Markup {
@@ -36,8 +36,8 @@ mod tests {
     fn each_style_has_its_tag() {
         assert_eq!(
             Rich::parse("*F*, η^2^, s~p~, **x**").html(),
-            "<i>F</i>, η<sup style=\"line-height:0\">2</sup>, \
-             s<sub style=\"line-height:0\">p</sub>, <strong>x</strong>"
+            "<i>F</i>, η<sup style=\"line-height:0;font-size:.75em\">2</sup>, \
+             s<sub style=\"line-height:0;font-size:.75em\">p</sub>, <strong>x</strong>"
         );
     }
 

@@ -11,8 +11,8 @@ pub(super) fn markdown(rich: &Rich) -> String {
         let follower = next.and_then(|run| run.text.chars().next());
         match run.style {
             Style::Plain => escape(&mut out, &text, follower),
-            Style::Italic => emphasis(&mut out, &text, Emphasis { mark: "*", tag: "em" }),
-            Style::Strong => emphasis(&mut out, &text, Emphasis { mark: "**", tag: "strong" }),
+            Style::Italic => emphasis(&mut out, &text, follower, &ITALIC),
+            Style::Strong => emphasis(&mut out, &text, follower, &STRONG),
             Style::Superscript => shifted(&mut out, &text, unicode_superscript(&text), "sup"),
             Style::Subscript => shifted(&mut out, &text, unicode_subscript(&text), "sub"),
         }
@@ -26,12 +26,20 @@ struct Emphasis {
     tag: &'static str,
 }
 
-/// Marks are read as marks only beside letters and figures on their inner side and away from other
-/// marks; elsewhere the tag is safe.
-fn emphasis(out: &mut String, text: &str, style: Emphasis) {
-    let legible = text.starts_with(char::is_alphanumeric)
-        && text.ends_with(char::is_alphanumeric)
-        && !out.ends_with(['*', '\\']);
+const ITALIC: Emphasis = Emphasis { mark: "*", tag: "em" };
+const STRONG: Emphasis = Emphasis { mark: "**", tag: "strong" };
+
+/// Marks are read as marks only where they cling to letters and figures or stand away from other
+/// text, and not beside other marks; elsewhere the tag is safe.
+fn emphasis(out: &mut String, text: &str, follower: Option<char>, style: &Emphasis) {
+    let clings = |inner: Option<char>, outer: Option<char>| {
+        let is_apart = outer.is_none_or(|outer| outer == ' ');
+        inner.is_some_and(|inner| inner.is_alphanumeric() || (inner != ' ' && is_apart))
+    };
+    let legible = clings(text.chars().next(), out.chars().next_back())
+        && clings(text.chars().next_back(), follower)
+        && !out.ends_with('*')
+        && follower != Some('*');
     let (open, close) = if legible {
         (style.mark.to_owned(), style.mark.to_owned())
     } else {
@@ -79,7 +87,7 @@ fn escape(out: &mut String, text: &str, follower: Option<char>) {
                 out.push('\\');
                 out.push(character);
             }
-            '.' | ')' if is_number(out) => {
+            '.' | ')' if is_number(out) && next.is_none_or(|next| next == ' ') => {
                 out.push('\\');
                 out.push(character);
             }
