@@ -12,6 +12,38 @@ pub struct Page {
     pub text: &'static str,
 }
 
+impl Page {
+    /// A page from its Markdown text: a heading, and a first paragraph of one line, which becomes
+    /// the summary.
+    ///
+    /// # Panics
+    /// At compile time, where the text has no such paragraph.
+    #[must_use]
+    pub const fn new(name: &'static str, text: &'static str) -> Self {
+        let bytes = text.as_bytes();
+        let mut start = 0;
+        while !ends_line(bytes, start) {
+            start += 1;
+        }
+        while ends_line(bytes, start) && start < bytes.len() {
+            start += 1;
+        }
+        let mut end = start;
+        while !ends_line(bytes, end) {
+            end += 1;
+        }
+        let (head, _) = text.split_at(end);
+        let (_, summary) = head.split_at(start);
+        assert!(!summary.is_empty(), "a page starts with a heading and a one-line paragraph");
+        Self { name, summary, text }
+    }
+}
+
+#[allow(clippy::indexing_slicing, reason = "the offset is compared with the length first")]
+const fn ends_line(bytes: &[u8], offset: usize) -> bool {
+    offset >= bytes.len() || bytes[offset] == b'\n'
+}
+
 /// What kind of column.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum ColumnKind {

@@ -24,6 +24,17 @@ pub fn dotted(segments: &[String]) -> String {
     segments.iter().map(written).collect::<Vec<_>>().join(".")
 }
 
+/// A list for a sentence: `a`, `b` and `c`, each in back-quotes.
+#[must_use]
+pub fn listed<'a>(names: impl IntoIterator<Item = &'a str>) -> String {
+    let shown: Vec<String> = names.into_iter().map(|name| format!("`{name}`")).collect();
+    match shown.as_slice() {
+        [] => String::new(),
+        [only] => only.clone(),
+        [first @ .., last] => format!("{} and {last}", first.join(", ")),
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -40,5 +51,11 @@ mod tests {
     fn numbers_in_a_path_stand_bare() {
         let path = ["main", "centroids", "fixed day", "1", "mean"].map(str::to_owned);
         assert_eq!(dotted(&path), "main.centroids.`fixed day`.1.mean");
+    }
+
+    #[test]
+    fn a_list_reads_as_a_sentence() {
+        assert_eq!(listed(["a"]), "`a`");
+        assert_eq!(listed(["a", "b", "c"]), "`a`, `b` and `c`");
     }
 }

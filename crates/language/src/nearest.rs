@@ -5,14 +5,18 @@
 /// its letters. The first of equals wins.
 pub fn nearest<'a>(word: &str, candidates: impl IntoIterator<Item = &'a str>) -> Option<&'a str> {
     let lower = word.to_lowercase();
-    let allowed = (lower.chars().count() / 3).max(1);
+    let length = lower.chars().count();
+    let allowed = (length / 3).max(1);
     candidates
         .into_iter()
         .map(|candidate| {
             let distance = strsim::damerau_levenshtein(&lower, &candidate.to_lowercase());
             (distance, candidate)
         })
-        .filter(|(distance, candidate)| *distance <= allowed && *candidate != word)
+        .filter(|(distance, candidate)| {
+            let shares_a_letter = *distance < length.max(candidate.chars().count());
+            *distance <= allowed && shares_a_letter && *candidate != word
+        })
         .min_by_key(|(distance, _)| *distance)
         .map(|(_, candidate)| candidate)
 }
@@ -32,5 +36,6 @@ mod tests {
     fn another_word_is_not_guessed_at() {
         assert_eq!(nearest("report", ["read", "compare"]), None);
         assert_eq!(nearest("x", ["mood"]), None);
+        assert_eq!(nearest("x", ["g"]), None);
     }
 }
