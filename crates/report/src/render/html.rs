@@ -9,6 +9,7 @@ use maud::{Markup, html};
 
 use super::Format;
 use super::page_html;
+use crate::rich::printable;
 use crate::table::{Cell, ColumnKind, Placed, Row, Spanner, Table};
 
 /// HTML, for notebooks and the web.
@@ -33,7 +34,8 @@ const NOTES: &str =
 
 /// Notebooks stripe the rows; journals do not.
 const ROW: &str = "background:transparent;border:none";
-const CELL: &str = "border:none;vertical-align:baseline;font-weight:normal;background:transparent";
+const HEAD: &str = "border:none;vertical-align:bottom;font-weight:normal";
+const CELL: &str = "border:none;vertical-align:baseline";
 
 /// The heavy rules above and below the table, and the light one under the heads.
 const TOP_RULE: &str = "border-top:2px solid";
@@ -53,7 +55,8 @@ pub(super) fn fragment(table: &Table) -> Markup {
         // The second and third class keep typesetters from reading a dollar sign as a formula.
         div class="tussock-table tex2jax_ignore mathjax_ignore" style=(OUTER) {
             div style=(FRAME) {
-                div style=(SCROLLER) { (grid(table)) }
+                @if table.width() > 0 { div style=(SCROLLER) { (grid(table)) } }
+                @else if let Some(caption) = table.caption() { p style=(NOTES) { (caption) } }
                 @if let Some(notes) = table.notes_paragraph() {
                     p style=(NOTES) { (notes) }
                 }
@@ -92,11 +95,15 @@ fn heads(table: &Table) -> Markup {
     html! {
         thead style="border:none" {
             @if table.is_spanned() {
-                tr style=(ROW) { @for spanner in table.spanners() { (spanner_head(table, spanner)) } }
                 tr style=(ROW) {
-                    @for spanner in table.spanners().into_iter().filter(|spanner| spanner.text.is_some()) {
-                        @for column in spanner.first..spanner.first + spanner.columns {
-                            (head(table, column, HeadPlace::Below))
+                    @for spanner in table.spanners() { (spanner_head(table, spanner)) }
+                }
+                tr style=(ROW) {
+                    @for spanner in table.spanners() {
+                        @if spanner.text.is_some() {
+                            @for column in spanner.first..spanner.first + spanner.columns {
+                                (head(table, column, HeadPlace::Below))
+                            }
                         }
                     }
                 }
@@ -111,7 +118,7 @@ fn heads(table: &Table) -> Markup {
 
 fn spanner_head(table: &Table, spanner: Spanner<'_>) -> Markup {
     let style =
-        format!("{CELL};{TOP_RULE};text-align:center;padding:.35em .5em 0;white-space:nowrap");
+        format!("{HEAD};{TOP_RULE};text-align:center;padding:.35em .5em 0;white-space:nowrap");
     html! {
         @match spanner.text {
             None => { (head(table, spanner.first, HeadPlace::Beside)) }
@@ -137,10 +144,13 @@ enum HeadPlace {
 }
 
 fn head(table: &Table, column: usize, place: HeadPlace) -> Markup {
-    let top = if place == HeadPlace::Below { "" } else { TOP_RULE };
+    let rules = match place {
+        HeadPlace::Alone | HeadPlace::Beside => format!("{TOP_RULE};{HEAD_RULE}"),
+        HeadPlace::Below => HEAD_RULE.to_owned(),
+    };
     let align = alignment(table.kind(column));
     let padding = padding(table, column, ".35em", ".35em");
-    let style = format!("{CELL};vertical-align:bottom;{top};{HEAD_RULE};{align};padding:{padding}");
+    let style = format!("{HEAD};{rules};{align};padding:{padding}");
     let rows = (place == HeadPlace::Beside).then_some(2);
     let text = table.head(column);
     html! {
@@ -171,25 +181,31 @@ fn body_row(table: &Table, row: &Row, position: Position) -> Markup {
         (false, false) => ".25em",
     };
     let below = if position.is_last { ".4em" } else { ".25em" };
-    let rule = if position.is_last { BOTTOM_RULE } else { "" };
     html! {
         tr style=(ROW) {
             @for column in 0..table.width() {
+                @let cell = row.cells.get(column).unwrap_or(&Cell::Empty);
                 @let padding = padding(table, column, above, below);
-                (body_cell(table.kind(column), row.cells.get(column), &format!("{rule};padding:{padding}")))
+                (body_cell(table.kind(column), cell, &padding, position.is_last))
             }
         }
     }
 }
 
-fn body_cell(kind: ColumnKind, cell: Option<&Cell>, own: &str) -> Markup {
-    let cell = cell.unwrap_or(&Cell::Empty);
-    let wrap = if matches!(cell, Cell::Text(_) | Cell::Empty) { "" } else { "white-space:nowrap;" };
-    let style = format!("{CELL};{};{wrap}{own}", alignment(kind));
+fn body_cell(kind: ColumnKind, cell: &Cell, padding: &str, is_last: bool) -> Markup {
+    let mut style = format!("{CELL};{};padding:{padding}", alignment(kind));
+    if !matches!(cell, Cell::Text(_) | Cell::Empty) {
+        style.push_str(";white-space:nowrap");
+    }
+    if is_last {
+        style = format!("{style};{BOTTOM_RULE}");
+    }
     let text = cell.rich();
     html! {
         @if kind == ColumnKind::RowHead && !text.is_empty() {
-            th scope="row" style=(style) { (text) }
+            th scope="row" style=(format!("{style};font-weight:normal")) title=[title(cell)] {
+                (text)
+            }
         } @else {
             td style=(style) title=[title(cell)] { (text) }
         }
@@ -206,9 +222,16 @@ fn placed_title(placed: &Placed) -> Option<String> {
     if placed.path.is_empty() {
         return None;
     }
-    let number = placed.value.number + 0.0;
-    let path = crate::rich::printable(&placed.path_text());
-    Some(if number.is_finite() { format!("{path} = {number:?}") } else { path })
+    let path = printable(&placed.path_text());
+    let number = placed.value.number;
+    Some(if number.is_finite() { format!("{path} = {}", full_precision(number)) } else { path })
+}
+
+/// The shortest figures that give the same number back; zero has no sign.
+fn full_precision(number: f64) -> String {
+    let number = number + 0.0;
+    let is_legible = number == 0.0 || (1e-5..1e15).contains(&number.abs());
+    if is_legible { number.to_string() } else { format!("{number:e}") }
 }
 
 fn alignment(kind: ColumnKind) -> &'static str {

@@ -51,10 +51,22 @@ fn block(block: &Block) -> Markup {
             Block::Note(text) => { p class="note" { (typeset(text)) } }
             Block::Problem { severity, title, lines } => {
                 aside class=(problem_class(*severity)) {
-                    p { strong { (severity.word()) ":" } " " (title) }
+                    p { strong { (severity.word()) ":" } " " (with_code(title)) }
                     @if !lines.is_empty() { pre { (lines.join("\n")) } }
                 }
             }
+        }
+    }
+}
+
+/// What stands between back-quotes is program text.
+fn with_code(title: &str) -> Markup {
+    let is_paired = title.matches('`').count().is_multiple_of(2);
+    html! {
+        @for (index, part) in title.split('`').enumerate() {
+            @if !is_paired { @if index > 0 { "`" } (part) }
+            @else if index % 2 == 1 { code { (part) } }
+            @else { (part) }
         }
     }
 }
