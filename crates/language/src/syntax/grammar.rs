@@ -95,18 +95,22 @@ impl Parser<'_> {
     /// Whether the next word starts a clause although a name could stand here.
     ///
     /// Words are contextual, so a column may be called `across`. A word of the grammar is taken as
-    /// a name unless something follows it that its own clause could start with.
+    /// a name unless something follows it that its own clause could start with, or is about to be
+    /// typed.
     pub(super) fn at_clause(&self) -> bool {
         let Some(verb) = self.verb else { return false };
         let Some(clause) = self.clause_here(verb) else { return false };
         let after = clause.words.len();
         self.may_follow(clause)
             && self.clause_at(verb, after).is_none()
-            && self.peek(after).is_some_and(|token| {
-                token.kind.is_name()
-                    || token.kind.is_text()
-                    || matches!(token.kind, SyntaxKind::Number | SyntaxKind::OpenParenthesis)
-            })
+            && match self.peek(after) {
+                Some(token) => {
+                    token.kind.is_name()
+                        || token.kind.is_text()
+                        || matches!(token.kind, SyntaxKind::Number | SyntaxKind::OpenParenthesis)
+                }
+                None => self.is_asked_what_follows(),
+            }
     }
 
     /// A clause; false where something in it is missing.

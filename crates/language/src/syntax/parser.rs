@@ -215,10 +215,15 @@ impl<'t> Parser<'t> {
         }
     }
 
+    /// Whether the caller wants to know what may stand at the end of this statement.
+    pub(super) fn is_asked_what_follows(&self) -> bool {
+        self.ending.is_some() && self.limit == self.tokens.len()
+    }
+
     /// Notes that something may stand here, if here is the end of the text.
     pub(super) fn expect(&mut self, expected: Expected) {
         let verb = self.verb;
-        let at_end = self.limit == self.tokens.len() && self.at_end();
+        let at_end = self.is_asked_what_follows() && self.at_end();
         if let Some(ending) = &mut self.ending
             && at_end
         {
