@@ -9,7 +9,8 @@ fn every_page_has_a_summary_a_heading_and_a_reference() {
     for term in terms::all() {
         let page = term.page;
         assert!(page.summary.len() >= 20, "{}: summary", page.name);
-        assert!(!page.summary.ends_with('.'), "{}: a summary is a phrase, not a sentence", page.name);
+        assert!(page.summary.ends_with('.'), "{}: the summary is a sentence", page.name);
+        assert!(!page.summary.contains('*'), "{}: lists show it as plain text", page.name);
         assert!(page.text.starts_with("# "), "{}: heading", page.name);
         let reference = page.text.split("**Reference.** ").nth(1).unwrap_or_default();
         assert!(has_year(reference), "{}: a reference with a year", page.name);
@@ -20,7 +21,9 @@ fn every_page_has_a_summary_a_heading_and_a_reference() {
 #[test]
 fn every_page_says_how_to_read_it_when_it_misleads_and_what_it_leaves_open() {
     for term in terms::all() {
-        for part in ["**How to read it.**", "**When it misleads.**", "**What it does not tell you.**"] {
+        for part in
+            ["**How to read it.**", "**When it misleads.**", "**What it does not tell you.**"]
+        {
             assert!(term.page.text.contains(part), "{} lacks {part}", term.page.name);
         }
     }
@@ -102,7 +105,6 @@ fn the_words_of_settings_lead_to_pages() {
 }
 
 fn has_year(text: &str) -> bool {
-    text.split(|c: char| !c.is_ascii_digit()).any(|digits| {
-        digits.len() == 4 && (digits.starts_with("19") || digits.starts_with("20"))
-    })
+    text.split(|c: char| !c.is_ascii_digit())
+        .any(|digits| digits.len() == 4 && (digits.starts_with("19") || digits.starts_with("20")))
 }

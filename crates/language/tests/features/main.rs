@@ -1,0 +1,10 @@
+//! What editors ask: completion, hover, outline, pages. Each file tests one of them, by texts with
+//! the cursor at `$0` and facts that are made up.
+
+mod completion;
+mod explain;
+mod facts;
+mod fixture;
+mod hover;
+mod symbols;
+mod terms;
