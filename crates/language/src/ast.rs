@@ -306,6 +306,35 @@ pub struct Expression {
     pub kind: ExpressionKind,
 }
 
+impl Expression {
+    /// The expressions directly in it, from left to right.
+    #[must_use]
+    pub fn operands(&self) -> Vec<&Self> {
+        match &self.kind {
+            ExpressionKind::Number(_) | ExpressionKind::Text(_) | ExpressionKind::Name(_) => {
+                Vec::new()
+            }
+            ExpressionKind::Negate(operand) | ExpressionKind::Not(operand) => vec![operand],
+            ExpressionKind::Binary { left, right, .. } => vec![left, right],
+            ExpressionKind::If { condition, then, otherwise } => vec![condition, then, otherwise],
+            ExpressionKind::In { value, list, .. } => {
+                std::iter::once(value.as_ref()).chain(list).collect()
+            }
+            ExpressionKind::Call { arguments, .. } => arguments.iter().collect(),
+        }
+    }
+
+    /// It and every expression in it, from the outside in and from left to right.
+    #[must_use]
+    pub fn parts(&self) -> Vec<&Self> {
+        let mut parts = vec![self];
+        for operand in self.operands() {
+            parts.extend(operand.parts());
+        }
+        parts
+    }
+}
+
 /// The forms of an expression.
 #[derive(Clone, Debug, PartialEq)]
 pub enum ExpressionKind {

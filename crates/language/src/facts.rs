@@ -82,11 +82,16 @@ pub trait Facts {
     fn functions(&self) -> &[Page];
     /// Pages of the built-in samples.
     fn samples(&self) -> &[Page];
+    /// Pages of the rules that need data or results, beside those of this crate.
+    fn rules(&self) -> &[Page] {
+        &[]
+    }
     /// The columns of a table.
     fn columns(&self, table: &str) -> Option<Vec<ColumnFact>>;
-    /// The levels of a column, in their order.
+    /// The levels that occur in a column after spellings are merged, in their order.
     fn levels(&self, table: &str, column: &str) -> Option<Vec<String>>;
-    /// Which keys may follow the first segments of a path (which begin with a comparison).
+    /// Which keys may follow the first segments of a path (which begin with a comparison); none
+    /// where a value stands there already, or where nothing is known.
     fn keys(&self, path: &[String]) -> Vec<KeyFact>;
     /// The value or citation at a path, as prose would print it.
     fn value(&self, path: &[String]) -> Option<String>;

@@ -67,8 +67,17 @@ impl Lowering<'_> {
     fn broken(&self) -> StatementKind {
         let defines = [SyntaxKind::NewTableName, SyntaxKind::NewComparisonName]
             .into_iter()
-            .find_map(|kind| self.name(&self.node, kind));
+            .find_map(|kind| self.name(&self.node, kind))
+            .or_else(|| self.name_after_as());
         StatementKind::Broken { defines }
+    }
+
+    /// The name after a word `as` that the grammar did not get to.
+    fn name_after_as(&self) -> Option<Name> {
+        let mut tokens = tokens(&self.node).skip_while(|token| token.text() != "as").skip(1);
+        let name = tokens.next().filter(|token| token.kind().is_name())?;
+        let span = span_of(name.text_range()).shifted(self.offset);
+        Some(Spanned { value: text::bare_name(name.text()).to_owned(), span })
     }
 
     /// Reports an error; the statement cannot be used.

@@ -1,5 +1,7 @@
 //! A document: one or more source texts, each divided into code and prose.
 
+mod markdown;
+
 use crate::span::{SourceId, Span};
 
 /// What kind of file a document is.
@@ -27,7 +29,8 @@ pub struct Document {
 pub struct Source {
     /// The text.
     pub text: String,
-    /// What of it is code and what is prose, in order and not overlapping.
+    /// What of it is code and what is prose, in order and not overlapping. The lines of the fences
+    /// around code are neither.
     pub regions: Vec<Region>,
 }
 
@@ -55,6 +58,18 @@ impl Document {
         Self { form: Form::Script, sources: vec![Source::code(text)] }
     }
 
+    /// A Markdown text: what stands in `tussock` fences is code, the rest is prose.
+    pub fn markdown(text: impl Into<String>) -> Self {
+        Self { form: Form::Markdown, sources: vec![Source::markdown(text)] }
+    }
+
+    /// A notebook, from its code and Markdown cells in their order: [`Source::code`] and
+    /// [`Source::prose`].
+    #[must_use]
+    pub fn notebook_cells(cells: Vec<Source>) -> Self {
+        Self { form: Form::Notebook, sources: cells }
+    }
+
     /// The text of a source, empty where there is no such source.
     #[must_use]
     pub fn text(&self, source: SourceId) -> &str {
@@ -71,6 +86,13 @@ impl Source {
     /// A text that is prose from end to end.
     pub fn prose(text: impl Into<String>) -> Self {
         Self::whole(text, RegionKind::Prose)
+    }
+
+    /// A Markdown text with fenced code.
+    pub fn markdown(text: impl Into<String>) -> Self {
+        let text = text.into();
+        let regions = markdown::regions(&text);
+        Self { text, regions }
     }
 
     fn whole(text: impl Into<String>, kind: RegionKind) -> Self {

@@ -1,0 +1,11 @@
+//! `cycle`: see the page beside this file.
+
+use super::{Finder, Rule};
+use crate::diagnostic::Severity;
+use crate::facts::Page;
+
+pub(super) const RULE: Rule = Rule {
+    page: Page::new("cycle", include_str!("cycle.md")),
+    severity: Severity::Error,
+    finder: Finder::Earlier,
+};
