@@ -4,7 +4,7 @@ use super::markdown::{cell, fenced, stacked, with_values};
 use super::scope::{Defines, Scope};
 use crate::ast::{ColumnSelection, Compare};
 use crate::facts::{ColumnFact, ColumnKind, Facts};
-use crate::names::{dotted, quoted};
+use crate::names::{NumberRange, dotted, is_plain, quoted};
 use crate::terms::{self, Term};
 use crate::verbs::{Choice, Clause, Part, Presence, Verb, What};
 
@@ -210,10 +210,11 @@ impl Describe<'_> {
             match selection {
                 ColumnSelection::One(name) => outcomes.push(name.value.clone()),
                 ColumnSelection::Range { first, last } => {
+                    let range = NumberRange::new(&first.value, &last.value);
                     let within = columns
                         .iter()
                         .map(|column| &column.name)
-                        .filter(|name| in_range(name, &first.value, &last.value));
+                        .filter(|name| range.as_ref().is_some_and(|range| range.contains(name)));
                     outcomes.extend(within.cloned());
                 }
             }
@@ -276,6 +277,12 @@ pub(super) static EXPRESSION_WORDS: &[Choice] = &[
     Choice { word: "else", summary: "the value where the condition does not hold" },
 ];
 
+/// A name as it must be written in an expression, whose own words need back-quotes as names.
+pub(super) fn written(name: &str) -> String {
+    let is_word = EXPRESSION_WORDS.iter().any(|known| known.word == name);
+    if is_plain(name) && !is_word { name.to_owned() } else { format!("`{name}`") }
+}
+
 /// The word for a kind of column.
 pub(super) fn kind_word(kind: ColumnKind) -> &'static str {
     match kind {
@@ -302,19 +309,4 @@ fn columns_table(columns: &[ColumnFact]) -> String {
 
 fn listed(names: &[String]) -> String {
     names.iter().map(|name| quoted(name)).collect::<Vec<_>>().join(", ")
-}
-
-/// Whether a name is the stem of a range with a number within it: `q3` in `q1..q9`.
-fn in_range(name: &str, first: &str, last: &str) -> bool {
-    let numbered = |name: &str| -> Option<(String, u64)> {
-        let stem = name.trim_end_matches(|digit: char| digit.is_ascii_digit());
-        let number = name.get(stem.len()..)?.parse().ok()?;
-        Some((stem.to_owned(), number))
-    };
-    match (numbered(name), numbered(first), numbered(last)) {
-        (Some((stem, number)), Some((first_stem, first)), Some((last_stem, last))) => {
-            stem == first_stem && stem == last_stem && (first..=last).contains(&number)
-        }
-        _ => false,
-    }
 }

@@ -20,11 +20,17 @@ pub(super) enum Defines {
 
 impl<'d> Scope<'d> {
     pub(super) fn of(document: &'d Document) -> Self {
-        let redefinition = match document.form {
-            Form::Notebook => Redefinition::NewestWins,
-            Form::Script | Form::Markdown => Redefinition::Error,
-        };
-        Self { document, model: Model::new(document, redefinition) }
+        Self { document, model: Model::new(document, redefinition(document)) }
+    }
+
+    /// The model.
+    pub(super) fn model(&self) -> &Model {
+        &self.model
+    }
+
+    /// Whether a later definition of a name replaces an earlier one.
+    pub(super) fn newest_wins(&self) -> bool {
+        redefinition(self.document) == Redefinition::NewestWins
     }
 
     /// Every statement of a source, in the order of the text.
@@ -101,5 +107,12 @@ impl<'d> Scope<'d> {
             | StatementKind::Write(_)
             | StatementKind::Pin(_) => None,
         }
+    }
+}
+
+fn redefinition(document: &Document) -> Redefinition {
+    match document.form {
+        Form::Notebook => Redefinition::NewestWins,
+        Form::Script | Form::Markdown => Redefinition::Error,
     }
 }

@@ -5,6 +5,8 @@ mod completion;
 mod explain;
 mod facts;
 mod fixture;
+mod highlight;
 mod hover;
+mod names;
 mod symbols;
 mod terms;

@@ -2,11 +2,11 @@
 
 use super::{Completion, CompletionKind, Request};
 use crate::facts::{ColumnFact, ColumnKind};
-use crate::features::describe::kind_word;
+use crate::features::describe::{kind_word, written};
 use crate::features::place::statement_at;
 use crate::features::scope::Defines;
 use crate::lower::text::bare_name;
-use crate::names::{is_plain, quoted};
+use crate::names::quoted;
 use crate::syntax::{SyntaxKind, span_of};
 
 /// Columns as they stand in the file.
@@ -51,7 +51,7 @@ fn ordered(
     columns
         .into_iter()
         .map(|column| Completion {
-            insert: quoted(&column.name),
+            insert: written(&column.name),
             replace: request.expectation.word,
             kind: CompletionKind::Column,
             detail: detail(&column),
@@ -126,8 +126,8 @@ impl Named for String {
 pub(super) fn slot_levels(request: &Request<'_>) -> Vec<Completion> {
     let Some(column) = request.expectation.column.clone() else { return Vec::new() };
     let levels = unnamed(request, SyntaxKind::LevelName, levels(request, &column));
-    let written = |level: &str| quoted(level);
-    level_completions(request, &column, levels, &written)
+    let as_name = |level: &str| quoted(level);
+    level_completions(request, &column, levels, &as_name)
 }
 
 /// Levels of a column that an expression compares. A level that is a number stands bare beside a
@@ -135,11 +135,11 @@ pub(super) fn slot_levels(request: &Request<'_>) -> Vec<Completion> {
 pub(super) fn compared_levels(request: &Request<'_>, column: &str) -> Vec<Completion> {
     let is_number =
         columns(request).iter().any(|fact| fact.name == column && fact.kind == ColumnKind::Number);
-    let written = |level: &str| {
-        let bare = is_plain(level) || (is_number && level.parse::<f64>().is_ok());
-        if bare { level.to_owned() } else { quoted(level) }
+    let as_operand = |level: &str| {
+        let is_bare = is_number && level.parse::<f64>().is_ok();
+        if is_bare { level.to_owned() } else { written(level) }
     };
-    level_completions(request, column, levels(request, column), &written)
+    level_completions(request, column, levels(request, column), &as_operand)
 }
 
 /// Levels of a column as texts inside quotes, which hold them already.
@@ -156,13 +156,13 @@ fn level_completions(
     request: &Request<'_>,
     column: &str,
     levels: Vec<String>,
-    written: &dyn Fn(&str) -> String,
+    as_written: &dyn Fn(&str) -> String,
 ) -> Vec<Completion> {
     let table = table(request).unwrap_or_default();
     levels
         .into_iter()
         .map(|level| Completion {
-            insert: written(&level),
+            insert: as_written(&level),
             replace: request.expectation.word,
             kind: CompletionKind::Level,
             detail: format!("a level of {column}"),
