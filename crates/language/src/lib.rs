@@ -8,6 +8,7 @@ pub mod diagnostic;
 pub mod document;
 pub mod facts;
 pub mod features;
+pub mod format;
 mod lower;
 pub mod model;
 pub mod names;
