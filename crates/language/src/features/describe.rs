@@ -32,8 +32,18 @@ impl Describe<'_> {
         )
     }
 
-    /// A comparison: how it is defined, its groups and outcomes, and the omnibus result.
+    /// A comparison: how it is defined, its groups and outcomes, and what came out.
     pub(super) fn comparison(&self, name: &str) -> Option<String> {
+        let mut text = self.comparison_as_defined(name)?;
+        let path = [name, "omnibus", "pillai"].map(str::to_owned);
+        if let Some(value) = self.facts.value(&path) {
+            text.push_str(&format!("\n\nTaken together: **{value}**"));
+        }
+        Some(text)
+    }
+
+    /// A comparison without its results, which may take a moment to compute.
+    pub(super) fn comparison_as_defined(&self, name: &str) -> Option<String> {
         let definition = self.scope.definition(Defines::Comparison, name)?;
         let mut text = format!("**`{}`**, a comparison\n\n{}", quoted(name), fenced(definition));
         if let Some(compare) = self.scope.comparison(name) {
@@ -46,49 +56,40 @@ impl Describe<'_> {
             }
             text.push_str(&format!("\n\nTable: {}", quoted(&compare.table.value)));
         }
-        let path = ["omnibus", "pillai"].map(str::to_owned);
-        let path: Vec<String> = std::iter::once(name.to_owned()).chain(path).collect();
-        if let Some(value) = self.facts.value(&path) {
-            text.push_str(&format!("\n\nTaken together: **{value}**"));
-        }
         Some(text)
     }
 
     /// A column of a table.
     pub(super) fn column(&self, table: &str, column: &str) -> Option<String> {
-        let fact = self.facts.columns(table)?.into_iter().find(|fact| fact.name == column);
-        let derived = self.derivation(table, column);
-        if fact.is_none() && derived.is_none() {
+        let facts = self.facts.columns(table).unwrap_or_default();
+        let fact = facts.iter().find(|fact| fact.name == column);
+        if fact.is_none() && self.derivation(table, column).is_none() {
             return None;
         }
-        let kind = fact.as_ref().map(|fact| kind_word(fact.kind)).unwrap_or("derived");
+        Some(self.column_with(table, column, fact))
+    }
+
+    /// A column of a table, of which this much is known.
+    pub(super) fn column_with(
+        &self,
+        table: &str,
+        column: &str,
+        fact: Option<&ColumnFact>,
+    ) -> String {
+        let kind = fact.map_or("derived", |fact| kind_word(fact.kind));
         let mut text = format!("**`{}`**, a {kind} column of `{}`", quoted(column), quoted(table));
         if let Some(fact) = fact.filter(|fact| !fact.detail.is_empty()) {
             text.push_str(&format!("\n\n{}", fact.detail));
         }
-        if let Some(derived) = derived {
+        if let Some(derived) = self.derivation(table, column) {
             text.push_str(&format!("\n\n{}", fenced(derived)));
         }
-        Some(text)
+        text
     }
 
     /// A level of a factor, and its place among the others.
     pub(super) fn level(&self, table: &str, column: &str, level: &str) -> Option<String> {
-        let levels = self.facts.levels(table, column)?;
-        let place = levels.iter().position(|known| known == level)?;
-        let reference = if place == 0 { ", the reference" } else { "" };
-        let list: Vec<String> = levels
-            .iter()
-            .map(|known| if known == level { format!("**{known}**") } else { known.clone() })
-            .collect();
-        Some(format!(
-            "**`{}`**, level {} of {} of `{}`{reference}\n\n{}",
-            quoted(level),
-            place + 1,
-            levels.len(),
-            quoted(column),
-            list.join(", ")
-        ))
+        level_among(column, level, &self.facts.levels(table, column)?)
     }
 
     /// The value at a path, and what its last segment means. `is_whole` says whether that segment
@@ -102,6 +103,9 @@ impl Describe<'_> {
             Some(value) => format!("`{}`: **{value}**", dotted(segments)),
             None => self.keys_below(segments),
         };
+        // A key without a page of its own is explained by the page of its view.
+        let view = || self.segment(segments.get(..2)?, false);
+        let meaning = meaning.or_else(|| if value.is_empty() { None } else { view() });
         let text = stacked([value.as_str(), meaning.as_deref().unwrap_or_default()]);
         (!text.is_empty()).then_some(text)
     }
@@ -204,18 +208,18 @@ impl Describe<'_> {
 
     /// The outcomes of a comparison; a range is written out where the columns are known.
     pub(super) fn outcomes(&self, compare: &Compare) -> Vec<String> {
-        let columns = self.facts.columns(&compare.table.value).unwrap_or_default();
         let mut outcomes = Vec::new();
         for selection in &compare.outcomes {
             match selection {
                 ColumnSelection::One(name) => outcomes.push(name.value.clone()),
                 ColumnSelection::Range { first, last } => {
                     let range = NumberRange::new(&first.value, &last.value);
+                    let columns = self.facts.columns(&compare.table.value).unwrap_or_default();
                     let within = columns
-                        .iter()
-                        .map(|column| &column.name)
+                        .into_iter()
+                        .map(|column| column.name)
                         .filter(|name| range.as_ref().is_some_and(|range| range.contains(name)));
-                    outcomes.extend(within.cloned());
+                    outcomes.extend(within);
                 }
             }
         }
@@ -228,6 +232,26 @@ impl Describe<'_> {
         let one = derived.iter().rfind(|derive| derive.value.column.column.value == column)?;
         Some(self.scope.text(one))
     }
+}
+
+/// A level of a factor, and its place among all of them.
+pub(super) fn level_among(column: &str, level: &str, levels: &[String]) -> Option<String> {
+    let place = levels.iter().position(|known| known == level)?;
+    let reference = if place == 0 { ", the reference" } else { "" };
+    let list: Vec<String> = levels
+        .iter()
+        .take(MOST)
+        .map(|known| if known == level { format!("**{known}**") } else { known.clone() })
+        .collect();
+    let more = if levels.len() > MOST { ", ..." } else { "" };
+    Some(format!(
+        "**`{}`**, level {} of {} of `{}`{reference}\n\n{}{more}",
+        quoted(level),
+        place + 1,
+        levels.len(),
+        quoted(column),
+        list.join(", ")
+    ))
 }
 
 /// A clause: its form, what it says, its choices.

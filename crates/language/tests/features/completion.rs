@@ -181,10 +181,11 @@ fn after_a_value_come_operators_and_the_next_clause() {
 #[test]
 fn samples_and_files_are_offered() {
     check("read sample $0", "ferry");
-    check("read $0", "sample crew.csv data/basil.csv");
-    check("read \"$0\" as crew", "crew.csv data/basil.csv");
+    check("read $0", "sample crew.csv data/");
+    check("read \"$0\" as crew", "crew.csv data/");
     check_taken("read \"cr$0\" as crew", "read \"crew.csv\" as crew");
-    check_taken("read \"da$0", "read \"data/basil.csv\"");
+    check_taken("read \"data/$0", "read \"data/basil.csv\"");
+    check_taken("read \"da$0", "read \"data/");
 }
 
 #[test]

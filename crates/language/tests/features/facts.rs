@@ -88,6 +88,7 @@ impl Facts for MadeUp {
             "main.functions.1.share" => ".92",
             "main.coefficients.share.mood.1" => ".31",
             "main.groups.fixed.mood.mean" => "4.12",
+            "main.groups.fixed.oddity" => "7",
             _ => return None,
         };
         Some(value.to_owned())
@@ -99,7 +100,8 @@ impl Facts for MadeUp {
     }
 
     fn files(&self, prefix: &str) -> Vec<String> {
-        let files = ["crew.csv", "data/basil.csv"];
+        let files: &[&str] =
+            if prefix.contains('/') { &["data/basil.csv"] } else { &["crew.csv", "data/"] };
         files
             .iter()
             .filter(|file| file.starts_with(prefix))

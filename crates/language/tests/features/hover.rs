@@ -194,6 +194,7 @@ fn each_segment_of_a_path_shows_its_value_and_its_meaning() {
     check(&pin("main.groups.fix$0ed.mood.mean"), "fixed", &["level 1 of 4"]);
     check(&pin("main.groups.fixed.mo$0od.mean"), "mood", &["a number column"]);
     check(&pin("main.groups.fixed.mood.me$0an"), "mean", &["**4.12**", "# Mean"]);
+    check(&pin("main.groups.fixed.odd$0ity"), "oddity", &["**7**", "# groups"]);
     check(&pin("main.pairs.fixed.forward.mood.g$0"), "g", &["# Hedges' g"]);
 }
 

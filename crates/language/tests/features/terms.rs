@@ -69,14 +69,23 @@ fn every_key_of_a_live_value_has_a_page() {
     let keys = [
         ("groups", "n mean sd se lower upper"),
         ("correlations", "within total"),
-        ("covariances", "box M chi2 df chi2_p F df1 df2 p logdet levene brown_forsythe"),
-        ("omnibus", "wilks pillai hotelling roy F df1 df2 p eta2 eta2_lower eta2_upper"),
+        (
+            "covariances",
+            "box M chi2 df chi2_p F df1 df2 p logdet logdet_pooled levene brown_forsythe",
+        ),
+        (
+            "omnibus",
+            "wilks pillai hotelling roy theta F df1 df2 p ln_p eta2 eta2_lower eta2_upper F_bound p_bound",
+        ),
         ("functions", "eigenvalue share canonical wilks F df1 df2 p"),
         ("coefficients", "raw standardized structure share"),
         ("centroids", "mean sd"),
         ("scores", "F df1 df2 p difference d g p_adjusted"),
         ("outcomes", "F df1 df2 p eta2 omega2"),
-        ("pairs", "difference lower upper t df p p_adjusted d g g_lower g_upper mean_abs_effect"),
+        (
+            "pairs",
+            "difference lower upper t df p p_bonferroni p_holm p_adjusted d g d_lower d_upper g_lower g_upper mean_abs_effect",
+        ),
     ];
     for (view, keys) in keys {
         for key in keys.split(' ') {

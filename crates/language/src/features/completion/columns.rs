@@ -2,7 +2,7 @@
 
 use super::{Completion, CompletionKind, Request};
 use crate::facts::{ColumnFact, ColumnKind};
-use crate::features::describe::{kind_word, written};
+use crate::features::describe::{kind_word, level_among, written};
 use crate::features::place::statement_at;
 use crate::features::scope::Defines;
 use crate::lower::text::bare_name;
@@ -55,7 +55,7 @@ fn ordered(
             replace: request.expectation.word,
             kind: CompletionKind::Column,
             detail: detail(&column),
-            page: request.names.column(&table, &column.name),
+            page: Some(request.names.column_with(&table, &column.name, Some(&column))),
             label: column.name,
         })
         .collect()
@@ -158,7 +158,7 @@ fn level_completions(
     levels: Vec<String>,
     as_written: &dyn Fn(&str) -> String,
 ) -> Vec<Completion> {
-    let table = table(request).unwrap_or_default();
+    let all = self::levels(request, column);
     levels
         .into_iter()
         .map(|level| Completion {
@@ -166,7 +166,7 @@ fn level_completions(
             replace: request.expectation.word,
             kind: CompletionKind::Level,
             detail: format!("a level of {column}"),
-            page: request.names.level(&table, column, &level),
+            page: level_among(column, &level, &all),
             label: level,
         })
         .collect()

@@ -135,7 +135,7 @@ fn from_page(page: &crate::facts::Page, kind: CompletionKind, replace: Span) -> 
         insert: page.name.to_owned(),
         replace,
         kind,
-        detail: page.summary.to_owned(),
+        detail: page.summary.trim_end_matches('.').to_owned(),
         page: Some(page.text.to_owned()),
     }
 }

@@ -33,7 +33,7 @@ pub(super) fn comparisons(names: &Describe<'_>, replace: Span, sign: &str) -> Ve
             replace,
             kind: CompletionKind::Comparison,
             detail: names.first_line(Defines::Comparison, &name),
-            page: names.comparison(&name),
+            page: names.comparison_as_defined(&name),
             label: name,
         })
         .collect()

@@ -64,7 +64,12 @@ fn texts(request: &Request<'_>, texts: Vec<String>, kind: CompletionKind) -> Vec
     texts
         .into_iter()
         .map(|text| Completion {
-            insert: format!("{}{}", escaped(&text), inner.closing),
+            // A folder is not the end of a path.
+            insert: format!(
+                "{}{}",
+                escaped(&text),
+                if text.ends_with('/') { "" } else { inner.closing }
+            ),
             replace: inner.span,
             kind,
             detail: String::new(),
