@@ -263,7 +263,7 @@ pub(super) fn clause(verb: &Verb, clause: &Clause) -> String {
     };
     let heading = format!("**`{}`**: {}", clause.usage(), clause.summary);
     let of = format!("A clause of `{}`; {need}.", verb.name());
-    let page = terms::of_word(clause.words.last().copied().unwrap_or_default());
+    let page = terms::of_word(&clause.name());
     let page = page.map(|term| term.page.text).unwrap_or_default();
     stacked([format!("{heading}\n\n{of}{}", choices(clause)).as_str(), page])
 }

@@ -60,10 +60,10 @@ pub fn page(name: &str, facts: &dyn Facts) -> Option<String> {
         .map(|entry| entry.page.text.to_owned())
         .collect();
     if pages.is_empty() {
-        pages.extend(terms_of(name).map(|term| term.page.text.to_owned()));
+        pages = clauses(name);
     }
     if pages.is_empty() {
-        pages = clauses(name);
+        pages.extend(terms_of(name).map(|term| term.page.text.to_owned()));
     }
     let pages = stacked(pages.iter().map(String::as_str));
     (!pages.is_empty()).then_some(pages)

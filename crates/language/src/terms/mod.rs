@@ -45,7 +45,7 @@ static TERMS: &[Term] = &[
     term!(Coefficient, "share", ["coefficients.share"]),
     term!(Other, "suppression", []),
     term!(Other, "discriminant-function", []),
-    term!(Other, "discriminant-score", ["scores.F", "scores.p", "scores.p_adjusted"]),
+    term!(Other, "discriminant-score", ["scores.F", "scores.p", "scores.p_adjusted", "scores alpha"]),
     term!(Other, "centroid", ["centroids.mean"]),
     term!(Other, "eigenvalue", []),
     term!(Other, "function-share", ["functions.share"]),

@@ -52,7 +52,11 @@ fn a_clause_shows_its_form_and_its_choices() {
     );
     check("policy pa$0irs holm", "pairs", &["pairs", "- `bonferroni`", "- `holm`"]);
     check("policy alp$0ha .05", "alpha", &["**`alpha RATE`**", "# Alpha", "**How to read it.**"]);
-    check("policy scores al$0pha .001", "scores alpha", &["**`scores alpha RATE`**"]);
+    check(
+        "policy scores al$0pha .001",
+        "scores alpha",
+        &["**`scores alpha RATE`**", "# Discriminant score"],
+    );
     check("levels crew.roster merging \"fxd\" in$0to fixed", "into", &["merging"]);
     check("read sam$0ple ferry as crew", "sample", &["# read"]);
 }
