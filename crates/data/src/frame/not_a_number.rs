@@ -9,6 +9,9 @@ use super::Notation;
 use super::number::{Unparsed, parse_number};
 use crate::clause::clause;
 
+/// How many characters of a cell a message shows.
+const SHOWN: usize = 40;
+
 /// A column that was asked for as numbers and is not.
 #[derive(Clone, Debug, PartialEq, Eq, thiserror::Error)]
 pub enum NotANumber {
@@ -89,7 +92,11 @@ impl fmt::Display for BadCell {
             1 => write!(out, "`{column}` has a cell that is not a number: ")?,
             _ => write!(out, "`{column}` has {count} cells that are not numbers, first ")?,
         }
-        write!(out, "{text:?} in row {row} (line {line} of the file)")
+        let shown: String = match text.char_indices().nth(SHOWN) {
+            Some((end, _)) => format!("{}...", text.get(..end).unwrap_or_default()),
+            None => text.clone(),
+        };
+        write!(out, "{shown:?} in row {row} (line {line} of the file)")
     }
 }
 

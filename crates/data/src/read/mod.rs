@@ -182,8 +182,9 @@ fn cells(text: &str, layout: &Layout, separator: u8) -> PolarsResult<DataFrame> 
         return Ok(DataFrame::empty_with_schema(&schema));
     };
     let body = text.get(first.range.start..last.range.end).unwrap_or_default();
-    // The parser takes a text that starts with these characters for a compressed file.
-    let looks_compressed = body.starts_with("x^") || body.starts_with("x\u{1}");
+    // The parser takes the first two for the start of a compressed file, and drops the third; a line
+    // before them, given as a header, prevents it.
+    let misleading = ["x^", "x\u{1}", "\u{feff}"].iter().any(|start| body.starts_with(start));
     let body = match layout.contiguous {
         true => Cow::Borrowed(body),
         false => {
@@ -191,11 +192,10 @@ fn cells(text: &str, layout: &Layout, separator: u8) -> PolarsResult<DataFrame> 
             rows.collect::<Vec<_>>().join("\n").into()
         }
     };
-    let body = if looks_compressed { format!("\n{body}").into() } else { body };
+    let body = if misleading { format!("-\n{body}").into() } else { body };
     let parse = CsvParseOptions::default().with_separator(separator);
     let cells = CsvReadOptions::default()
-        .with_has_header(false)
-        .with_skip_lines(usize::from(looks_compressed))
+        .with_has_header(misleading)
         .with_schema(Some(Arc::new(schema)))
         .with_parse_options(parse)
         .with_rechunk(true)
