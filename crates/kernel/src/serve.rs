@@ -50,7 +50,6 @@ pub fn serve<E: Evaluator>(connection: &Connection, evaluator: E) -> Result<(), 
     let (publications, publications_inbox) = mailbox(&bells, "iopub")?;
     let (notices, notices_inbox) = mailbox::<Notice>(&bells, "shell")?;
     let publisher = Publisher::new(publications);
-    publisher.starting();
 
     let (beats, beats_inbox) = mailbox(&bells, "heartbeat")?;
     let heartbeat_failures = failures.another()?;

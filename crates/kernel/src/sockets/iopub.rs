@@ -32,7 +32,8 @@ impl Publisher {
 
     /// Publishes what follows from a request.
     pub(crate) fn publish(&self, request: &Request, kind: &str, content: Value) {
-        self.post(kind, request.header.clone(), content);
+        let message = message(kind, request.header.clone(), content);
+        self.queue.post(Publication::Message(message));
     }
 
     /// Publishes that work on a request begins (`busy`) or has ended (`idle`).
@@ -40,21 +41,16 @@ impl Publisher {
         self.publish(request, "status", json!({ "execution_state": state }));
     }
 
-    /// Publishes that the kernel is there.
-    pub(crate) fn starting(&self) {
-        self.post("status", json!({}), json!({ "execution_state": "starting" }));
-    }
-
     /// Ends the publishing thread.
     pub(crate) fn end(&self) {
         self.queue.post(Publication::End);
     }
+}
 
-    fn post(&self, kind: &str, parent: Value, content: Value) {
-        let identities = vec![kind.as_bytes().to_vec()];
-        let message = Message { identities, kind: kind.to_owned(), parent, content };
-        self.queue.post(Publication::Message(message));
-    }
+/// A message under a topic of its own type's name.
+fn message(kind: &str, parent: Value, content: Value) -> Message {
+    let identities = vec![kind.as_bytes().to_vec()];
+    Message { identities, kind: kind.to_owned(), parent, content }
 }
 
 /// Publishes until it is told to end.
@@ -62,17 +58,25 @@ impl Publisher {
 /// # Errors
 /// When the socket fails.
 pub(crate) fn run(socket: &Socket, wire: &Wire, inbox: &Inbox<Publication>) -> Result<(), Error> {
+    // That the kernel has started is told to the first subscriber: earlier nobody would hear it.
+    let mut untold = Some(message("status", json!({}), json!({ "execution_state": "starting" })));
     loop {
         inbox.wait_with(socket)?;
         // Newcomers first: what is published next reaches them.
         while let Some(parts) = receive(socket)? {
             if let Some(topic) = subscription(&parts) {
                 send(socket, wire, &welcome(topic))?;
+                if let Some(starting) = untold.take() {
+                    send(socket, wire, &starting)?;
+                }
             }
         }
         for publication in inbox.letters()? {
             match publication {
-                Publication::Message(message) => send(socket, wire, &message)?,
+                Publication::Message(message) => {
+                    untold = None;
+                    send(socket, wire, &message)?;
+                }
                 Publication::End => return Ok(()),
             }
         }
