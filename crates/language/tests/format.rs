@@ -95,6 +95,7 @@ fn a_statement_with_an_error_stays_as_it_is() {
 fn line_ends_and_the_mark_at_the_start_stay() {
     becomes("\u{feff}show  a of b\r\n  alpha .01\r\n", "\u{feff}show a of b alpha .01\r\n");
     becomes("show  a of b", "show a of b");
+    becomes("show a of b\r\nshow a off\n  b\nread", "show a of b\r\nshow a off\r\n  b\r\nread");
 }
 
 #[test]

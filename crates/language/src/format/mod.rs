@@ -8,7 +8,7 @@ mod statement;
 use crate::diagnostic::Edit;
 use crate::document::{Document, Form, RegionKind};
 use crate::span::{Location, SourceId, Span};
-use crate::syntax::{Parse, SyntaxElement, SyntaxKind, SyntaxToken, parse};
+use crate::syntax::{Parse, SyntaxElement, SyntaxKind, SyntaxNode, SyntaxToken, parse};
 
 /// How far a statement's continuation is indented.
 const INDENTATION: &str = "  ";
@@ -80,22 +80,44 @@ fn shortest(source: SourceId, region: Span, before: &str, after: &str) -> Option
 fn region(text: &str, region: Span, margin: &str) -> String {
     let code = region.of(text);
     let parse = parse(text, region);
-    let mut layout = Layout::new(code, margin);
-    for element in parse.root().children_with_tokens() {
+    let root = parse.root();
+    let line_break = line_break(&root);
+    let mut layout = Layout::new(code, margin, &line_break);
+    for element in root.children_with_tokens() {
         match element {
             SyntaxElement::Node(node) if node.kind() == SyntaxKind::Statement => {
                 let formatted = if has_error(&parse, parse.span(&node)) {
-                    node.text().to_string()
+                    as_it_is(&node, &line_break)
                 } else {
-                    statement::format(&node, margin, layout.line_break)
+                    statement::format(&node, margin, &line_break)
                 };
                 layout.item(&formatted, "");
             }
-            SyntaxElement::Node(node) => layout.item(&node.text().to_string(), ""),
+            SyntaxElement::Node(node) => layout.item(&as_it_is(&node, &line_break), ""),
             SyntaxElement::Token(token) => layout.trivia(&token),
         }
     }
     layout.finish()
+}
+
+/// The line break of a text, which is its first one. Those within texts in quotes do not count.
+fn line_break(root: &SyntaxNode) -> String {
+    tokens(root)
+        .find(|token| token.kind() == SyntaxKind::Newline)
+        .map_or_else(|| "\n".to_owned(), |token| token.text().to_owned())
+}
+
+/// A statement as it is, but for the spelling of its line breaks.
+fn as_it_is(statement: &SyntaxNode, line_break: &str) -> String {
+    let text = |token: SyntaxToken| match token.kind() {
+        SyntaxKind::Newline => line_break.to_owned(),
+        _ => token.text().to_owned(),
+    };
+    tokens(statement).map(text).collect()
+}
+
+fn tokens(node: &SyntaxNode) -> impl Iterator<Item = SyntaxToken> + use<> {
+    node.descendants_with_tokens().filter_map(rowan::NodeOrToken::into_token)
 }
 
 fn has_error(parse: &Parse, statement: Span) -> bool {
@@ -120,12 +142,7 @@ struct Layout<'t> {
 }
 
 impl<'t> Layout<'t> {
-    fn new(code: &'t str, margin: &'t str) -> Self {
-        let line_break = match code.find(['\r', '\n']) {
-            Some(at) if code.get(at..).is_some_and(|rest| rest.starts_with("\r\n")) => "\r\n",
-            Some(at) if code.get(at..).is_some_and(|rest| rest.starts_with('\r')) => "\r",
-            _ => "\n",
-        };
+    fn new(code: &str, margin: &'t str, line_break: &'t str) -> Self {
         let mark = if code.starts_with('\u{feff}') { "\u{feff}" } else { "" };
         Self {
             out: mark.to_owned(),

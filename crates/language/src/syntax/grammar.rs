@@ -57,14 +57,19 @@ impl Parser<'_> {
     }
 
     fn report_missing_clauses(&mut self, verb: &'static Verb, word: Span) {
-        for clause in verb.clauses {
-            if clause.presence == Presence::Required && !self.clauses.contains(&clause.words) {
-                let message =
-                    format!("`{}` needs `{}`, {}", verb.name(), clause.usage(), clause.summary);
-                let error = SyntaxError::new(word, message);
-                self.report(error.help(format!("the form is: {}", verb.usage())));
-            }
-        }
+        let is_missing = |clause: &&Clause| {
+            clause.presence == Presence::Required && !self.clauses.contains(&clause.words)
+        };
+        let missing: Vec<&Clause> = verb.clauses.iter().filter(is_missing).collect();
+        let forms: Vec<String> = missing.iter().map(|clause| clause.usage()).collect();
+        let needed = listed(forms.iter().map(String::as_str));
+        let message = match missing.as_slice() {
+            [] => return,
+            [only] => format!("`{}` needs {needed}, {}", verb.name(), only.summary),
+            _ => format!("`{}` needs {needed}", verb.name()),
+        };
+        let help = format!("the form is: {}", verb.usage());
+        self.report(SyntaxError::new(word, message).help(help));
     }
 
     /// Notes the clauses that could still follow.
