@@ -1,5 +1,7 @@
 //! The parser on whole programs, on half-typed ones, and on what is hardly text at all.
 
+#![allow(clippy::panic, reason = "a helper of a test fails as the test does")]
+
 use tussock_language::ast::{
     Adjustment, Better, ColumnSelection, Expression, ExpressionKind, Operator, ProsePart,
     ReadSource, Statement, StatementKind,

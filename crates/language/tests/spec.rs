@@ -6,6 +6,8 @@
 //! `tussock unformatted` is formatted into the block `tussock formatted` that follows it, and a
 //! block `markdown` is a whole document, with the comments in `<!-- -->`.
 
+#![allow(clippy::indexing_slicing, reason = "a helper of a test fails as the test does")]
+
 mod support;
 
 use std::path::{Path, PathBuf};

@@ -109,9 +109,9 @@ fn line_break(root: &SyntaxNode) -> String {
 
 /// A statement as it is, but for the spelling of its line breaks.
 fn as_it_is(statement: &SyntaxNode, line_break: &str) -> String {
-    let text = |token: SyntaxToken| match token.kind() {
-        SyntaxKind::Newline => line_break.to_owned(),
-        _ => token.text().to_owned(),
+    let text = |token: SyntaxToken| {
+        let is_break = token.kind() == SyntaxKind::Newline;
+        if is_break { line_break.to_owned() } else { token.text().to_owned() }
     };
     tokens(statement).map(text).collect()
 }
@@ -155,6 +155,10 @@ impl<'t> Layout<'t> {
         }
     }
 
+    #[expect(
+        clippy::wildcard_enum_match_arm,
+        reason = "what else stands between statements is a comment"
+    )]
     fn trivia(&mut self, token: &SyntaxToken) {
         match token.kind() {
             SyntaxKind::Newline => {

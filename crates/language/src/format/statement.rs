@@ -61,6 +61,7 @@ fn split_clause(atoms: &[Atom]) -> Option<(&[Atom], &[Atom])> {
     atoms.split_at_checked(length.map_or(atoms.len(), |length| length + 1))
 }
 
+#[expect(clippy::wildcard_enum_match_arm, reason = "tokens of every other kind are handled alike")]
 fn atoms(statement: &SyntaxNode) -> Vec<Atom> {
     let mut atoms: Vec<Atom> = Vec::new();
     let mut before: Option<SyntaxToken> = None;
@@ -93,6 +94,7 @@ fn atoms(statement: &SyntaxNode) -> Vec<Atom> {
     atoms
 }
 
+#[expect(clippy::wildcard_enum_match_arm, reason = "tokens of every other kind are handled alike")]
 fn is_spaced(before: &SyntaxToken, token: &SyntaxToken) -> bool {
     use SyntaxKind::{
         CloseBracket, CloseParenthesis, Comma, Dot, DotDot, FunctionName, Minus, Negation,

@@ -5,6 +5,7 @@ use crate::span::{Span, Spanned};
 use crate::syntax::{SyntaxElement, SyntaxKind, SyntaxNode, SyntaxToken};
 
 /// The allowances in the comments directly above a statement, without a blank line between.
+#[expect(clippy::wildcard_enum_match_arm, reason = "tokens of every other kind are handled alike")]
 pub(super) fn above(statement: &SyntaxNode, offset: usize) -> Vec<Allowance> {
     let mut allowed = Vec::new();
     let mut newlines = 0;
@@ -32,10 +33,10 @@ pub(super) fn above(statement: &SyntaxNode, offset: usize) -> Vec<Allowance> {
 fn starts_its_line(comment: &SyntaxToken) -> bool {
     let mut before = comment.prev_sibling_or_token();
     while let Some(SyntaxElement::Token(token)) = &before {
-        match token.kind() {
-            SyntaxKind::Whitespace => before = token.prev_sibling_or_token(),
-            kind => return kind == SyntaxKind::Newline,
+        if token.kind() != SyntaxKind::Whitespace {
+            return token.kind() == SyntaxKind::Newline;
         }
+        before = token.prev_sibling_or_token();
     }
     before.is_none()
 }

@@ -23,6 +23,7 @@ pub(super) fn is_expression(kind: SyntaxKind) -> bool {
 
 /// The typed form of an expression without syntax errors; none, and an error, where a number or an
 /// escape means nothing.
+#[expect(clippy::wildcard_enum_match_arm, reason = "nodes of other kinds are no expressions")]
 pub(super) fn lower(statement: &mut Lowering<'_>, node: &SyntaxNode) -> Option<Expression> {
     let span = statement.span_of(node);
     if node.kind() == SyntaxKind::Parenthesized {

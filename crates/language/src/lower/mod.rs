@@ -124,6 +124,7 @@ impl Lowering<'_> {
     }
 
     /// The outcomes of a comparison.
+    #[expect(clippy::wildcard_enum_match_arm, reason = "other nodes are no outcomes")]
     pub(crate) fn column_selections(&self, node: &SyntaxNode) -> Vec<ColumnSelection> {
         node.children()
             .filter_map(|node| match node.kind() {
@@ -201,6 +202,7 @@ impl Lowering<'_> {
     }
 
     /// The texts and numbers of a list, each as a text.
+    #[expect(clippy::wildcard_enum_match_arm, reason = "other nodes are no items of the list")]
     pub(crate) fn texts_as_written(&mut self, node: &SyntaxNode) -> Vec<Spanned<String>> {
         let mut texts = Vec::new();
         for item in node.children() {

@@ -112,6 +112,7 @@ pub struct Question {
 
 /// What is asked.
 #[derive(Clone, Debug, PartialEq)]
+#[expect(clippy::large_enum_variant, reason = "a document asks few questions")]
 pub enum QuestionKind {
     /// A table.
     Show(Show),

@@ -73,7 +73,7 @@ fn braces(rest: &str, start: usize, found: &mut Prose) -> usize {
     let place = |span: Span| span.shifted(start + 2);
     match live_value(content, Span::new(start, start + whole), place) {
         Ok(value) => found.values.push(value),
-        Err(error) => found.errors.push(error),
+        Err(error) => found.errors.push(*error),
     }
     whole
 }

@@ -40,7 +40,7 @@ pub(crate) fn parts(cooked: &Cooked, errors: &mut Vec<SyntaxError>) -> Vec<Prose
                 parts.push(ProsePart::Value(value));
                 plain = close;
             }
-            Err(error) => errors.push(error),
+            Err(error) => errors.push(*error),
         }
         from = close;
     }
@@ -79,7 +79,7 @@ fn live_value(
     content: &str,
     span: Span,
     place: impl Fn(Span) -> Span,
-) -> Result<LiveValue, SyntaxError> {
+) -> Result<LiveValue, Box<SyntaxError>> {
     let tokens: Vec<Token> =
         tokens(content).into_iter().filter(|token| !token.kind.is_trivia()).collect();
     let mut rest = tokens.as_slice();
@@ -91,7 +91,7 @@ fn live_value(
                 let written = token.span.of(content);
                 let message = format!("`{written}` is no key of a live value");
                 let help = "a key that is not a plain name goes in back-quotes";
-                return Err(SyntaxError::new(place(token.span), message).help(help));
+                return Err(Box::new(SyntaxError::new(place(token.span), message).help(help)));
             }
             None => {
                 let message = match segments.as_slice() {
@@ -99,7 +99,7 @@ fn live_value(
                     _ => "a key is missing after the dot",
                 };
                 let error = SyntaxError::new(span, message);
-                return Err(error.help("write for example `{{main.omnibus.pillai}}`"));
+                return Err(Box::new(error.help("write for example `{{main.omnibus.pillai}}`")));
             }
         };
         let value = bare_name(token.span.of(content)).to_owned();
@@ -118,14 +118,14 @@ fn live_value(
                 Some(decimals) => Some(decimals),
                 None => {
                     let message = format!("a live value has {MOST_DECIMALS} decimals at most");
-                    return Err(SyntaxError::new(place(token.span), message));
+                    return Err(Box::new(SyntaxError::new(place(token.span), message)));
                 }
             }
         }
         [token, ..] => {
             let message = "after the path only the number of decimals may follow";
             let help = "write for example `{{main.omnibus.pillai.value 3}}`";
-            return Err(SyntaxError::new(place(token.span), message).help(help));
+            return Err(Box::new(SyntaxError::new(place(token.span), message).help(help)));
         }
     };
     let path_span = match (segments.first(), segments.last()) {
@@ -135,6 +135,7 @@ fn live_value(
     Ok(LiveValue { path: Path { segments, span: path_span }, decimals, span })
 }
 
+#[expect(clippy::wildcard_enum_match_arm, reason = "tokens of other kinds are no keys")]
 fn is_key(token: Token, content: &str, first: bool) -> bool {
     match token.kind {
         SyntaxKind::Name => true,

@@ -79,6 +79,7 @@ impl Look<'_> {
         self.columns.iter().any(|column| column.name == *name).then_some(name)
     }
 
+    #[expect(clippy::wildcard_enum_match_arm, reason = "only names and texts stand for levels")]
     fn level(&self, column: &str, expression: &Expression) -> Option<Diagnostic> {
         match &expression.kind {
             ExpressionKind::Name(name) => self.name(column, name, expression.span),

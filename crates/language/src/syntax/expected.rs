@@ -5,7 +5,7 @@ use super::kind::{SyntaxKind, SyntaxNode};
 use super::parser::expected_at_end;
 use super::span_of;
 use crate::span::Span;
-use crate::verbs::{Clause, Slot, Verb};
+use crate::verbs::{Clause, Presence, Slot, Verb};
 
 /// One thing that may stand at a place.
 #[derive(Clone, Debug, PartialEq)]
@@ -85,15 +85,13 @@ pub fn expected_at(text: &str, region: Span, offset: usize) -> Expectation {
     let statement = statement_around(&root, word.start).filter(|_| ending.verb.is_some());
     let present = statement.as_ref().map(clause_words).unwrap_or_default();
     let mut expected = ending.expected;
-    expected.retain(|expected| match expected {
-        Expected::Clause(clause) => {
-            clause.presence == crate::verbs::Presence::Repeatable
-                || !present.iter().any(|(start, words)| {
-                    *start != word.start
-                        && words.iter().map(String::as_str).eq(clause.words.iter().copied())
-                })
-        }
-        _ => true,
+    expected.retain(|expected| {
+        let Expected::Clause(clause) = expected else { return true };
+        let elsewhere = present.iter().any(|(start, words)| {
+            *start != word.start
+                && words.iter().map(String::as_str).eq(clause.words.iter().copied())
+        });
+        clause.presence == Presence::Repeatable || !elsewhere
     });
     Expectation {
         verb: ending.verb,

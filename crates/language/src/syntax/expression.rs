@@ -23,7 +23,7 @@ enum Power {
     Sum,
     Product,
     Negation,
-    Power,
+    Exponent,
 }
 
 impl Power {
@@ -36,7 +36,7 @@ impl Power {
             Self::Comparison => Self::Sum,
             Self::Sum => Self::Product,
             Self::Product => Self::Negation,
-            Self::Negation | Self::Power => Self::Power,
+            Self::Negation | Self::Exponent => Self::Exponent,
         }
     }
 }
@@ -100,7 +100,7 @@ impl Parser<'_> {
             let compared = column.as_deref().filter(|_| power == Power::Comparison);
             self.operator();
             // A power is right-associative and its exponent may be negative: `2^-1`.
-            let next = if power == Power::Power { Power::Negation } else { power.tighter() };
+            let next = if power == Power::Exponent { Power::Negation } else { power.tighter() };
             let found = self.binary(next, "a value", compared);
             self.close();
             if !found {
@@ -333,11 +333,7 @@ impl Parser<'_> {
         let token = self.peek(0)?;
         let text = token.span.of(self.text);
         let sign = if token.kind == SyntaxKind::Unknown { meant(text)? } else { text };
-        let known = match token.kind {
-            SyntaxKind::Name => matches!(sign, "and" | "or"),
-            kind => kind != SyntaxKind::QuotedName,
-        };
-        if !known {
+        if token.kind == SyntaxKind::QuotedName {
             return None;
         }
         Some(match sign {
@@ -346,7 +342,7 @@ impl Parser<'_> {
             "=" | "!=" | "<" | "<=" | ">" | ">=" => Power::Comparison,
             "+" | "-" => Power::Sum,
             "*" | "/" => Power::Product,
-            "^" => Power::Power,
+            "^" => Power::Exponent,
             _ => return None,
         })
     }

@@ -17,6 +17,7 @@ pub(super) struct Layout {
 ///
 /// The margin is the indentation of the first line that holds a token other than a comment, so that
 /// code in an indented fence of a Markdown list reads as it would at the left edge.
+#[expect(clippy::wildcard_enum_match_arm, reason = "tokens of every other kind are handled alike")]
 pub(super) fn layout(text: &str, tokens: &[Token]) -> Layout {
     let mut margin: Option<usize> = None;
     let mut indentation = Some(0);

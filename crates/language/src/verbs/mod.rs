@@ -230,6 +230,7 @@ impl Slot {
         self.noun.split_once(' ').map_or(self.noun, |(_, noun)| noun)
     }
 
+    #[expect(clippy::wildcard_enum_match_arm, reason = "the noun says what any other thing is")]
     fn usage(&self) -> String {
         let one = match self.what {
             What::OneOf(choices) => {
