@@ -1,48 +1,207 @@
 //! The facts that the language asks for, from the real files and the real answers.
 
-use tussock_language::document::Document;
-use tussock_language::facts::{ColumnFact, Facts, KeyFact, Page};
+use std::fs;
+use std::path::Path;
 
-use crate::session::Session;
+use tussock_data::frame::Kind;
+use tussock_data::samples;
+use tussock_language::facts::{ColumnFact, ColumnKind, Facts, KeyFact, Page};
+use tussock_language::span::Location;
+use tussock_report::render;
+use tussock_report::table::Table;
+
+use crate::context::Context;
+use crate::evaluate::Columns;
+use crate::factor::levels;
+use crate::functions;
+use crate::relation::Relation;
+use crate::rules;
+use crate::values::{at, keys_after};
+use crate::views::{self, Request, Shown, View};
 
 /// Facts about one version of one document.
 #[derive(Debug)]
 pub struct Knowledge<'a> {
-    _session: &'a Session,
+    context: Held<'a>,
+    views: Vec<Page>,
+    functions: Vec<Page>,
+    samples: Vec<Page>,
+}
+
+#[derive(Debug)]
+enum Held<'a> {
+    Owned(Box<Context<'a>>),
+    Borrowed(&'a Context<'a>),
 }
 
 impl<'a> Knowledge<'a> {
-    pub(crate) fn new(session: &'a Session, _document: &Document) -> Self {
-        Self { _session: session }
+    pub(crate) fn new(context: Context<'a>) -> Self {
+        Self::holding(Held::Owned(Box::new(context)))
+    }
+
+    pub(crate) fn borrowing(context: &'a Context<'a>) -> Self {
+        Self::holding(Held::Borrowed(context))
+    }
+
+    fn holding(context: Held<'a>) -> Self {
+        let page = |sample: &samples::Sample| Page {
+            name: sample.name,
+            summary: sample.summary,
+            text: sample.page,
+        };
+        let samples = samples::samples().iter().map(page).collect();
+        Self { context, views: views::pages(), functions: functions::pages(), samples }
+    }
+
+    fn context(&self) -> &Context<'a> {
+        match &self.context {
+            Held::Owned(context) => context,
+            Held::Borrowed(context) => context,
+        }
+    }
+
+    /// What a view shows under the document's policy, where it can be had.
+    fn shown(&self, comparison: &str, view: &dyn View, kind: Option<&str>) -> Option<Shown> {
+        let mut request: Request = self.context().request();
+        request.coefficients = kind.map(str::to_owned);
+        let shown = self.context().shown(comparison, view, &request, Location::default());
+        shown.ok().map(|shown| (*shown).clone())
+    }
+
+    /// The full path of the segments that were written: the term of the design put in.
+    fn full(&self, path: &[String]) -> Option<(Shown, Vec<String>)> {
+        let [comparison, name, keys @ ..] = path else { return None };
+        let view = views::find(name)?;
+        let shown = self.shown(comparison, view, None)?;
+        let study = self.context().study(comparison, Location::default()).ok()?;
+        let factor = &study.comparison.factor;
+        let mut full = vec![comparison.clone(), name.clone()];
+        if view.by_term() && keys.first() != Some(factor) {
+            full.push(factor.clone());
+        }
+        full.extend(keys.iter().cloned());
+        Some((shown, full))
     }
 }
 
 impl Facts for Knowledge<'_> {
     fn views(&self) -> &[Page] {
-        &[]
+        &self.views
     }
+
     fn functions(&self) -> &[Page] {
-        &[]
+        &self.functions
     }
+
     fn samples(&self) -> &[Page] {
-        &[]
+        &self.samples
     }
-    fn columns(&self, _: &str) -> Option<Vec<ColumnFact>> {
-        None
+
+    fn rules(&self) -> &[Page] {
+        rules::PAGES
     }
-    fn levels(&self, _: &str, _: &str) -> Option<Vec<String>> {
-        None
+
+    fn columns(&self, table: &str) -> Option<Vec<ColumnFact>> {
+        let relation = self.context().relation(table, Location::default()).ok()?;
+        Some(relation.names().iter().map(|name| column(&relation, name)).collect())
     }
-    fn keys(&self, _: &[String]) -> Vec<KeyFact> {
-        Vec::new()
+
+    fn levels(&self, table: &str, column: &str) -> Option<Vec<String>> {
+        let relation = self.context().relation(table, Location::default()).ok()?;
+        // An order that is being written is not yet right; the levels that occur still are.
+        levels(&relation, column, Location::default())
+            .or_else(|_| crate::factor::present(&relation, column))
+            .ok()
     }
-    fn value(&self, _: &[String]) -> Option<String> {
-        None
+
+    fn keys(&self, path: &[String]) -> Vec<KeyFact> {
+        if let [comparison] = path {
+            if !self.context().model.comparisons.contains_key(comparison) {
+                return Vec::new();
+            }
+            let fact = |page: &Page| KeyFact {
+                key: page.name.to_owned(),
+                detail: page.summary.to_owned(),
+            };
+            return self.views.iter().map(fact).collect();
+        }
+        let Some((shown, full)) = self.full(path) else { return Vec::new() };
+        let fact = |key: String| {
+            let mut whole = full.clone();
+            whole.push(key.clone());
+            let detail = at(&shown, &whole).map(|found| found.rich(None).text());
+            KeyFact { key, detail: detail.unwrap_or_default() }
+        };
+        keys_after(&shown, &full).into_iter().map(fact).collect()
     }
-    fn coefficients(&self, _: &str, _: &str) -> Option<String> {
-        None
+
+    fn value(&self, path: &[String]) -> Option<String> {
+        let (shown, full) = self.full(path)?;
+        at(&shown, &full).map(|found| found.rich(None).text())
     }
-    fn files(&self, _: &str) -> Vec<String> {
-        Vec::new()
+
+    fn coefficients(&self, comparison: &str, kind: &str) -> Option<String> {
+        let view = views::find("coefficients")?;
+        let shown = self.shown(comparison, view, Some(kind))?;
+        let table = shown.tables.first()?;
+        // The hover's own text says what the notes of the table say.
+        Some(render::markdown::table(&Table { notes: Vec::new(), ..table.clone() }))
     }
+
+    fn files(&self, prefix: &str) -> Vec<String> {
+        data_files(self.context().session.root(), prefix)
+    }
+}
+
+fn column(relation: &Relation, name: &str) -> ColumnFact {
+    let number = relation.kind(name) == Some(Kind::Number);
+    let location = Location::default();
+    let mut detail = Vec::new();
+    if let Some(label) = relation.label(name) {
+        let unit = label.unit.as_ref().map(|unit| format!(", {}", unit.value));
+        detail.push(format!("{}{}", label.text.value, unit.unwrap_or_default()));
+    }
+    if let (true, Ok(values)) = (number, relation.numbers(name, location)) {
+        let present: Vec<f64> = values.iter().copied().filter(|x| !x.is_nan()).collect();
+        let low = present.iter().copied().fold(f64::INFINITY, f64::min);
+        let high = present.iter().copied().fold(f64::NEG_INFINITY, f64::max);
+        if low <= high {
+            detail.push(format!("{low} to {high}"));
+        }
+        detail.push(missing(values.len() - present.len()));
+    } else if let Ok(levels) = crate::factor::present(relation, name) {
+        let shown: Vec<&str> = levels.iter().map(String::as_str).take(6).collect();
+        let more = if levels.len() > shown.len() { ", ..." } else { "" };
+        detail.push(format!("{}{more}", shown.join(", ")));
+    }
+    detail.retain(|part| !part.is_empty());
+    let kind = if number { ColumnKind::Number } else { ColumnKind::Text };
+    ColumnFact { name: name.to_owned(), kind, detail: detail.join("; ") }
+}
+
+fn missing(count: usize) -> String {
+    match count {
+        0 => String::new(),
+        count => format!("{count} missing"),
+    }
+}
+
+/// Data files at and below a folder's own level whose path begins with `prefix`.
+fn data_files(root: &Path, prefix: &str) -> Vec<String> {
+    let folder = prefix.rfind('/').map_or("", |at| prefix.get(..=at).unwrap_or_default());
+    let Ok(entries) = fs::read_dir(root.join(folder)) else { return Vec::new() };
+    let mut files: Vec<String> = entries
+        .flatten()
+        .filter_map(|entry| {
+            let name = entry.file_name().into_string().ok()?;
+            let is_folder = entry.file_type().ok()?.is_dir();
+            let ending = Path::new(&name).extension().and_then(|ending| ending.to_str());
+            let is_data = matches!(ending, Some("csv" | "tsv" | "tab" | "txt"));
+            let path = format!("{folder}{name}{}", if is_folder { "/" } else { "" });
+            let hidden = name.starts_with('.');
+            ((is_folder || is_data) && !hidden && path.starts_with(prefix)).then_some(path)
+        })
+        .collect();
+    files.sort();
+    files
 }

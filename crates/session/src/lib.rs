@@ -4,7 +4,27 @@
 //! notebook and in the document.
 
 pub mod answer;
+mod answering;
+mod cache;
 pub mod cancel;
+mod checking;
+mod comparison;
+mod context;
+mod evaluate;
+mod factor;
+pub mod files;
+mod fingerprint;
+mod flow;
+mod functions;
 pub mod knowledge;
 pub mod notebook;
+pub mod page;
+mod policy;
+mod refusal;
+mod relation;
+mod rules;
 pub mod session;
+mod study;
+mod trouble;
+mod values;
+mod views;

@@ -65,7 +65,7 @@ impl Notebook {
 
     /// What completion and hover need to know.
     #[must_use]
-    pub fn knowledge(&self, document: &Document) -> Knowledge<'_> {
+    pub fn knowledge<'a>(&'a self, document: &'a Document) -> Knowledge<'a> {
         self.session.knowledge(document)
     }
 
