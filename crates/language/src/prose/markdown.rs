@@ -16,7 +16,7 @@ pub struct Prose {
 
 /// Finds the live values of a prose region.
 ///
-/// Code spans and fenced code hold none, and `\{{` opens none. A live value ends in the paragraph
+/// Code spans, fenced code and HTML comments hold none, and `\{{` opens none. A live value ends in the paragraph
 /// in which it starts.
 #[must_use]
 pub fn live_values(text: &str, region: Span) -> Prose {
@@ -50,6 +50,8 @@ pub fn live_values(text: &str, region: Span) -> Prose {
             offset += 1 + after.chars().next().map_or(0, char::len_utf8);
         } else if rest.starts_with('`') {
             offset += code_span(rest);
+        } else if rest.starts_with("<!--") {
+            offset += rest.find("-->").map_or(rest.len(), |end| end + 3);
         } else if rest.starts_with("{{") {
             offset += braces(rest, region.start + offset, &mut found);
         } else {
@@ -149,6 +151,7 @@ mod tests {
         assert!(paths("Write `{{main.x}}` or ``{{a`}}``, or \\{{main.x}}.").is_empty());
         assert!(paths("```python\n{{x}}\n```\n").is_empty());
         assert_eq!(paths("~~~\n{{x}}\n~~~\n{{main.x}}"), ["{{main.x}}"]);
+        assert_eq!(paths("<!-- {{main.x}} --> {{main.y}} <!-- {{main.z}}"), ["{{main.y}}"]);
         assert_eq!(paths("a stray ` quote\n\n{{main.x}}"), ["{{main.x}}"]);
     }
 

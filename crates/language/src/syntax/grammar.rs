@@ -134,7 +134,8 @@ impl Parser<'_> {
             let whole = Span::new(start, self.end_of_last_token());
             let message = format!("`{}` stands twice in one statement", clause.name());
             let error = SyntaxError::of("duplicate-clause", words, message);
-            self.report(error.help("keep one of the two").fix(
+            let help = if clause.words == ["in"] { LIST_HELP } else { "keep one of the two" };
+            self.report(error.help(help).fix(
                 format!("Remove the second `{}`", clause.name()),
                 whole,
                 "",
@@ -293,6 +294,9 @@ impl Parser<'_> {
                 let error = SyntaxError::new(span, format!("a comma is missing before `{word}`"));
                 error.fix("Insert a comma", Span::new(end, end), ",")
             }
+            (Some(SyntaxKind::Name), None) if word == "in" => {
+                SyntaxError::new(span, "a list is missing after `in`").help(LIST_HELP)
+            }
             (Some(SyntaxKind::Name), None) => {
                 let message = format!("`{}` has no clause `{word}`", verb.name());
                 SyntaxError::of("unknown-word", span, message).help(clause_help(verb, &open))
@@ -345,6 +349,9 @@ impl Parser<'_> {
         self.close();
     }
 }
+
+/// A bare `in` in a condition is the clause of a table, or nothing.
+const LIST_HELP: &str = "a list of levels goes in brackets: `in [north, east]`";
 
 fn clause_help(verb: &Verb, open: &[String]) -> String {
     if open.is_empty() {

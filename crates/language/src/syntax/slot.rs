@@ -72,7 +72,10 @@ impl Parser<'_> {
             What::Comparison => self.name(SyntaxKind::ComparisonName),
             What::NewComparison => self.name(SyntaxKind::NewComparisonName),
             What::View => self.name(SyntaxKind::ViewName),
-            What::Column => self.name(SyntaxKind::ColumnName),
+            What::Column => {
+                self.name(SyntaxKind::ColumnName);
+                self.crossing();
+            }
             What::Level => self.name(SyntaxKind::LevelName),
             What::Columns => return self.columns(),
             What::ColumnPath | What::NewColumnPath => return self.column_path(),
@@ -217,6 +220,21 @@ impl Parser<'_> {
         }
         self.name(SyntaxKind::ColumnName);
         true
+    }
+
+    /// Passes over `x ship` after a factor, and says that there is one factor at a time.
+    fn crossing(&mut self) {
+        let crosses = self.word_at(0, "x") || self.at(SyntaxKind::Cross);
+        let goes_on = self.peek(1).is_some_and(|token| token.kind.is_name());
+        if !crosses || !goes_on {
+            return;
+        }
+        let error = SyntaxError::of("several-factors", self.here(), "factors cannot be crossed");
+        self.report(error.help("compare one factor at a time"));
+        self.open(SyntaxKind::Error);
+        self.bump();
+        self.bump();
+        self.close();
     }
 
     /// `roster`, `roster x ship`
