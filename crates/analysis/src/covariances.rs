@@ -171,3 +171,30 @@ impl Approximation {
         FTest { f, df1, df2, p: central_f::survival(f, df1, df2) }
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn both_branches_of_the_f_approximation_meet_where_c2_is_the_square_of_c1() {
+        let at = |c2: f64| Approximation { c1: 0.1, c2, df1: 6.0 }.f_test(9.0);
+        let meeting = at(0.1 * 0.1);
+        assert_eq!(meeting.df2, f64::INFINITY);
+        assert!((meeting.f - 9.0 * 0.9 / 6.0).abs() < 1e-15);
+        for near in [0.01 + 1e-9, 0.01 - 1e-9] {
+            let beside = at(near);
+            assert!(beside.df2 > 1e9 && beside.df2.is_finite());
+            assert!((beside.f / meeting.f - 1.0).abs() < 1e-7, "{beside:?}");
+            assert!((beside.p.p / meeting.p.p - 1.0).abs() < 1e-6, "{beside:?}");
+        }
+    }
+
+    #[test]
+    fn an_m_beyond_the_range_of_the_second_branch_has_no_probability_left() {
+        let approximation = Approximation { c1: 0.3, c2: 0.01, df1: 3.0 };
+        let limit = approximation.f_test(1e6);
+        assert_eq!((limit.f, limit.p.p), (f64::INFINITY, 0.0));
+        assert!(approximation.f_test(10.0).f.is_finite());
+    }
+}

@@ -58,7 +58,7 @@ pub struct Criteria {
     /// The Hotelling-Lawley trace U = Σ λ; exact where s = 1. Absent where s > 1 and df of the error
     /// = p: neither approximation has degrees of freedom then.
     pub hotelling: Option<Criterion>,
-    /// Which approximation tests the Hotelling-Lawley trace.
+    /// Which approximation tests the Hotelling-Lawley trace; absent where its test is exact or absent.
     pub hotelling_approximation: Option<TraceApproximation>,
     /// Roy's criterion as the largest root λ1; exact where s = 1, else its F is an upper bound and its
     /// p a lower bound.
@@ -81,7 +81,7 @@ pub fn criteria(hypothesis: &Hypothesis, level: f64) -> Criteria {
         wilks: wilks(roots, &setting, level),
         pillai: pillai(roots, &setting, level),
         hotelling: hotelling.map(|trace| trace.criterion),
-        hotelling_approximation: hotelling.map(|trace| trace.approximation),
+        hotelling_approximation: hotelling.and_then(|trace| trace.approximation),
         roy: roy(roots, &setting, level),
         roy_theta: roots.first().map_or(0.0, |root| root / (1.0 + root)),
     }
@@ -193,25 +193,27 @@ fn pillai(roots: &[f64], setting: &Setting, level: f64) -> Criterion {
 #[derive(Clone, Copy)]
 struct Trace {
     criterion: Criterion,
-    approximation: TraceApproximation,
+    approximation: Option<TraceApproximation>,
 }
 
 fn hotelling(roots: &[f64], setting: &Setting, level: f64) -> Option<Trace> {
     let &Setting { p, q, v, s, units } = setting;
     let value: f64 = roots.iter().sum();
-    let (test, approximation) = if v > p + 3.0 {
+    let (test, approximation) = if s == 1.0 {
+        (largest_root_test(roots, setting), None)
+    } else if v > p + 3.0 {
         let df1 = p * q;
         let b = (v + q - p - 1.0) * (v - 1.0) / ((v - p - 3.0) * (v - p));
         let df2 = 4.0 + (df1 + 2.0) / (b - 1.0);
         let f = value * df2 * (v - p - 1.0) / (df1 * (df2 - 2.0));
-        (f_test(f, df1, df2), TraceApproximation::McKeon)
+        (f_test(f, df1, df2), Some(TraceApproximation::McKeon))
     } else {
         let df1 = s * p.max(q);
         let df2 = s * (v - p - 1.0) + 2.0;
         if df2 <= 0.0 {
             return None;
         }
-        (f_test(df2 * value / (s * df1), df1, df2), TraceApproximation::PillaiSamson)
+        (f_test(df2 * value / (s * df1), df1, df2), Some(TraceApproximation::PillaiSamson))
     };
     let criterion = Criterion {
         value,
@@ -224,12 +226,19 @@ fn hotelling(roots: &[f64], setting: &Setting, level: f64) -> Option<Trace> {
     Some(Trace { criterion, approximation })
 }
 
-fn roy(roots: &[f64], setting: &Setting, level: f64) -> Criterion {
-    let &Setting { p, q, v, units, .. } = setting;
-    let value = roots.first().copied().unwrap_or_default();
+/// The F of a single root, which is exact, or the upper bound that the largest of several gives.
+fn largest_root_test(roots: &[f64], setting: &Setting) -> FTest {
+    let &Setting { p, q, v, .. } = setting;
+    let root = roots.first().copied().unwrap_or_default();
     let larger = p.max(q);
     let df2 = v + q - larger;
-    let test = f_test(value * df2 / larger, larger, df2);
+    f_test(root * df2 / larger, larger, df2)
+}
+
+fn roy(roots: &[f64], setting: &Setting, level: f64) -> Criterion {
+    let units = setting.units;
+    let value = roots.first().copied().unwrap_or_default();
+    let test = largest_root_test(roots, setting);
     let exactness = setting.exact_up_to(1.0, Exactness::Bound);
     let eta2_interval = match exactness {
         Exactness::Exact => invert(test, level, |x| x / (x + units)),

@@ -6,8 +6,10 @@ use crate::centring::{Centred, check_varies};
 use crate::error::AnalysisError;
 use crate::numeric::ROUNDOFF;
 use crate::numeric::jacobi::singular;
-use crate::residuals::{Independence, ResidualFactor};
+use crate::residuals::ResidualFactor;
 use crate::sample::Sample;
+
+pub use crate::residuals::Independence;
 
 /// A root counts as zero where its square root is below this many times what rounding can produce.
 const ROOT_ROUNDINGS: f64 = 4.0;
@@ -26,6 +28,7 @@ const EQUALLY_LARGE: f64 = 1e-9;
 #[derive(Clone, Debug)]
 pub struct Hypothesis {
     residuals: ResidualFactor,
+    effects: DMatrix<f64>,
     df_hypothesis: usize,
     df_error: usize,
     units: usize,
@@ -41,7 +44,7 @@ impl Hypothesis {
     /// `effects` has p columns, one for each outcome in its own units, and its cross product is H.
     pub(crate) fn new(
         residuals: ResidualFactor,
-        effects: &DMatrix<f64>,
+        effects: DMatrix<f64>,
         df_hypothesis: usize,
         df_error: usize,
         units: usize,
@@ -64,7 +67,16 @@ impl Hypothesis {
                 weights.neg_mut();
             }
         }
-        Hypothesis { residuals, df_hypothesis, df_error, units, roots, directions, standardized }
+        Hypothesis {
+            residuals,
+            effects,
+            df_hypothesis,
+            df_error,
+            units,
+            roots,
+            directions,
+            standardized,
+        }
     }
 
     /// Number of outcomes, p.
@@ -126,6 +138,20 @@ impl Hypothesis {
         self.residuals.norms().iter().map(|norm| norm / df.sqrt()).collect()
     }
 
+    /// Rows whose cross product is H, with a column for every outcome in its own units.
+    pub fn effects(&self) -> &DMatrix<f64> {
+        &self.effects
+    }
+
+    /// The upper triangular matrix whose cross product is E, p x p, for outcomes in their own units.
+    pub fn error_factor(&self) -> DMatrix<f64> {
+        let mut factor = self.residuals.factor().clone();
+        for (mut column, norm) in factor.column_iter_mut().zip(self.residuals.norms()) {
+            column *= *norm;
+        }
+        factor
+    }
+
     /// The outcome nearest to being refused as a linear function of others.
     pub fn independence(&self) -> Independence {
         self.residuals.independence()
@@ -174,7 +200,7 @@ pub fn one_way(sample: &Sample) -> Result<Hypothesis, AnalysisError> {
     let centred = sample.centred();
     let residuals = ResidualFactor::new(&centred)?;
     let effects = effect_rows(&centred, sample.group_sizes());
-    Ok(Hypothesis::new(residuals, &effects, groups - 1, df_error, units))
+    Ok(Hypothesis::new(residuals, effects, groups - 1, df_error, units))
 }
 
 /// One row for each group: its size's root times the distance of its means from the grand means.

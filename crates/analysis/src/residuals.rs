@@ -10,12 +10,14 @@ use crate::numeric::householder::{PivotedFactor, RowFactor};
 /// Rows folded at once: a block of a hundred outcomes stays in a processor's cache.
 const BLOCK: usize = 256;
 
-/// An outcome is refused where less is left of it than this many times the rounding of its input and
-/// of the outcomes it depends on: not one digit of what is left would be right.
+/// An outcome is refused where less is left of it than this many times what rounding of its values
+/// and of those it depends on can add up to.
 const INPUT_ROUNDINGS: f64 = 10.0;
 
-/// The same for the rounding of the factorization itself, relative to the residuals.
-const OWN_ROUNDINGS: f64 = 64.0;
+/// The same for the rounding of the factorization itself, relative to the residuals and for each unit
+/// of the square root of the rows. What it leaves of a column that depends exactly on others was
+/// below 1.1 roundings up to a thousand rows, 4 at twenty thousand and 19 at two hundred thousand.
+const OWN_ROUNDINGS: f64 = 10.0;
 
 /// A relation counts an outcome in whose scaled weight is more than this part of the largest.
 const NEGLIGIBLE_WEIGHT: f64 = 1e-9;
@@ -25,7 +27,7 @@ const NEGLIGIBLE_WEIGHT: f64 = 1e-9;
 /// With D the diagonal matrix of the norms and R the factor, the error cross products are
 /// E = D R'R D; they are never formed, since that would square the condition of the data.
 #[derive(Clone, Debug)]
-pub struct ResidualFactor {
+pub(crate) struct ResidualFactor {
     norms: Vec<f64>,
     factor: DMatrix<f64>,
     input_ratios: Vec<f64>,
@@ -49,10 +51,10 @@ impl ResidualFactor {
     /// Outcomes are taken in the order of pivoting, each time the one with the largest part left
     /// outside the span of those before it. Let w be its weights on those (1 for itself), all in
     /// columns of unit norm, and b an outcome's input norm over its residual norm. Rounding of the
-    /// input can fake a remainder of u Σ|w|b, where u = 2^-53, and the factorization one of a few
-    /// u Σ|w|. An outcome is refused where its remainder is below
-    /// u Σ|w|(10 b + 64): data that lie far from zero compared with their spread are
-    /// rounded more coarsely, so that more must be left of them.
+    /// input can fake a remainder of u Σ|w|b, where u = 2^-53, and the factorization of N rows one of
+    /// less than u Σ|w| √N. An outcome is refused where its remainder is not ten times that, 10 u
+    /// Σ|w|(b + √N): not one digit of it would be right. Data far from zero compared with their spread
+    /// are rounded more coarsely, so more must be left of them.
     ///
     /// # Errors
     ///
@@ -62,27 +64,28 @@ impl ResidualFactor {
         let factor = fold(outcomes, &norms);
         let input_ratios: Vec<f64> =
             outcomes.iter().zip(&norms).map(|(outcome, norm)| outcome.input_norm / norm).collect();
-        let independence = decide_rank(&factor, &norms, &input_ratios)?;
+        let rows = outcomes.first().map_or(0, |outcome| outcome.residuals.len());
+        let independence = decide_rank(&factor, rows, &norms, &input_ratios)?;
         Ok(ResidualFactor { norms, factor, input_ratios, independence })
     }
 
     /// Number of outcomes.
-    pub fn outcome_count(&self) -> usize {
+    pub(crate) fn outcome_count(&self) -> usize {
         self.norms.len()
     }
 
     /// The norm of every residual column: the square root of its sum of squares.
-    pub fn norms(&self) -> &[f64] {
+    pub(crate) fn norms(&self) -> &[f64] {
         &self.norms
     }
 
     /// R, upper triangular, p x p, with columns of unit norm.
-    pub fn factor(&self) -> &DMatrix<f64> {
+    pub(crate) fn factor(&self) -> &DMatrix<f64> {
         &self.factor
     }
 
     /// The outcome nearest to being refused as dependent.
-    pub fn independence(&self) -> Independence {
+    pub(crate) fn independence(&self) -> Independence {
         self.independence
     }
 
@@ -127,10 +130,12 @@ fn fold(outcomes: &[Centred], norms: &[f64]) -> DMatrix<f64> {
 #[allow(clippy::indexing_slicing, reason = "the steps are those of the square factor")]
 fn decide_rank(
     factor: &DMatrix<f64>,
+    rows: usize,
     norms: &[f64],
     input_ratios: &[f64],
 ) -> Result<Independence, AnalysisError> {
     let pivoted = PivotedFactor::new(factor);
+    let own_roundings = OWN_ROUNDINGS * (rows as f64).sqrt();
     let ratios: Vec<f64> = pivoted.order.iter().map(|&j| at(input_ratios, j)).collect();
     let mut nearest: Option<Independence> = None;
     for (step, &outcome) in pivoted.order.iter().enumerate() {
@@ -140,7 +145,7 @@ fn decide_rank(
                 .iter()
                 .chain([&1.0])
                 .zip(&ratios)
-                .map(|(weight, ratio)| weight.abs() * (INPUT_ROUNDINGS * ratio + OWN_ROUNDINGS))
+                .map(|(weight, ratio)| weight.abs() * (INPUT_ROUNDINGS * ratio + own_roundings))
                 .sum::<f64>();
         let remainder = pivoted.factor[(step, step)].abs();
         // The first column has its full norm left; whether it varies at all is decided elsewhere.
