@@ -1,4 +1,4 @@
-//! Tables that are built in. All of their data is invented.
+//! Tables that are built in. All of their data is invented; the example `generate_samples` writes it.
 
 /// A table that is built in.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -13,7 +13,26 @@ pub struct Sample {
     pub text: &'static str,
 }
 
-static SAMPLES: &[Sample] = &[];
+/// A sample whose page and table lie beside this file.
+macro_rules! sample {
+    ($name:literal, $summary:literal) => {
+        Sample {
+            name: $name,
+            summary: $summary,
+            page: include_str!(concat!($name, ".md")),
+            text: include_str!(concat!($name, ".csv")),
+        }
+    };
+}
+
+static SAMPLES: &[Sample] = &[
+    sample!("ferry", "Crew of Skerry Ferries under three duty rosters; invented data."),
+    sample!(
+        "ferry_waves",
+        "Crew of Skerry Ferries asked three times after a change of rosters; invented data."
+    ),
+    sample!("basil", "Potted basil in three substrates, few plants each; invented data."),
+];
 
 /// All samples.
 #[must_use]
