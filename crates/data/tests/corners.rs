@@ -5,7 +5,7 @@ use tussock_data::read::{ReadOptions, default_separator, read_bytes};
 
 #[track_caller]
 fn read_with(bytes: &[u8], options: &ReadOptions) -> Frame {
-    read_bytes(bytes, ',', options).unwrap()
+    read_bytes(bytes, ',', options).expect("the table is well formed")
 }
 
 #[track_caller]
@@ -14,7 +14,7 @@ fn read(text: &str) -> Frame {
 }
 
 fn texts(frame: &Frame, name: &str) -> Vec<Option<String>> {
-    frame.texts(name).unwrap()
+    frame.texts(name).expect("the column exists")
 }
 
 fn some(texts: &[&str]) -> Vec<Option<String>> {

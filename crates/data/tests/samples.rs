@@ -8,11 +8,13 @@ use tussock_data::read::{ReadOptions, read_bytes};
 use tussock_data::samples::{Sample, sample, samples};
 
 fn table(sample: &Sample) -> Frame {
-    read_bytes(sample.text.as_bytes(), ',', &ReadOptions::default()).unwrap()
+    read_bytes(sample.text.as_bytes(), ',', &ReadOptions::default())
+        .expect("samples are well formed")
 }
 
 fn missing(frame: &Frame, column: &str) -> usize {
-    frame.texts(column).unwrap().iter().filter(|cell| cell.is_none()).count()
+    let cells = frame.texts(column).expect("the column exists");
+    cells.iter().filter(|cell| cell.is_none()).count()
 }
 
 #[test]

@@ -104,28 +104,15 @@ impl std::error::Error for BadCell {}
 
 impl BadCell {
     fn help(&self) -> String {
-        if let Some(clause) = self.mend.clause() {
-            return match &self.mend {
-                Mend::DeclareMissing { .. } => {
-                    format!("if it stands for a missing value, write `{clause}` after `read`")
-                }
-                _ => format!("if the numbers have a decimal comma, write `{clause}` after `read`"),
-            };
+        match (&self.mend, self.mend.clause()) {
+            (Mend::DeclareMissing { .. }, Some(clause)) => {
+                format!("if it stands for a missing value, write `{clause}` after `read`")
+            }
+            (_, Some(clause)) => {
+                format!("if the numbers have a decimal comma, write `{clause}` after `read`")
+            }
+            (mend, None) => mend.in_the_file().to_owned(),
         }
-        match &self.mend {
-            Mend::DropDecimalComma => "the numbers have a decimal point: leave out `decimal \",\"`",
-            Mend::RemoveThousands => {
-                "the commas seem to set off thousands: remove them in the file"
-            }
-            Mend::RemoveInfinity => {
-                "an infinite value can't be analysed: correct the cell in the file, or empty it"
-            }
-            Mend::UseAsText => "no cell of this column is a number: it can serve as a factor",
-            Mend::DeclareDecimalComma | Mend::DeclareMissing { .. } | Mend::CorrectCell => {
-                "correct the cell in the file, or empty it if the value is missing"
-            }
-        }
-        .to_owned()
     }
 }
 
@@ -141,6 +128,23 @@ impl Mend {
             | Self::RemoveInfinity
             | Self::UseAsText
             | Self::CorrectCell => None,
+        }
+    }
+
+    /// What to do where no clause mends it.
+    fn in_the_file(&self) -> &'static str {
+        match self {
+            Self::DropDecimalComma => "the numbers have a decimal point: leave out `decimal \",\"`",
+            Self::RemoveThousands => {
+                "the commas seem to set off thousands: remove them in the file"
+            }
+            Self::RemoveInfinity => {
+                "an infinite value can't be analysed: correct the cell in the file, or empty it"
+            }
+            Self::UseAsText => "no cell of this column is a number: it can serve as a factor",
+            Self::DeclareDecimalComma | Self::DeclareMissing { .. } | Self::CorrectCell => {
+                "correct the cell in the file, or empty it if the value is missing"
+            }
         }
     }
 }

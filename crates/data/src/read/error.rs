@@ -143,14 +143,19 @@ impl ReadError {
     /// What to do, for the line below the message.
     #[must_use]
     pub fn help(&self) -> Option<String> {
-        if let Some(clause) = self.clause() {
-            return Some(match self {
-                Self::NotUtf8 { .. } => {
-                    format!("save the file as UTF-8, or write `{clause}` after `read`")
-                }
-                _ => format!("write `{clause}` after `read`"),
-            });
-        }
+        let clause = self.clause();
+        let help = match (self, clause) {
+            (Self::NotUtf8 { .. }, Some(clause)) => {
+                format!("save the file as UTF-8, or write `{clause}` after `read`")
+            }
+            (_, Some(clause)) => format!("write `{clause}` after `read`"),
+            (error, None) => return error.help_beyond_clauses(),
+        };
+        Some(help)
+    }
+
+    /// What to do where no clause mends it.
+    fn help_beyond_clauses(&self) -> Option<String> {
         let help = match self {
             Self::NotFound { near: Some(near), .. } => format!("did you mean `{near}`?"),
             Self::NotFound { tables, .. } => match tables.as_slice() {
@@ -200,6 +205,7 @@ impl ReadError {
 
     /// The clause of the `read` statement that mends it, where one does.
     #[must_use]
+    #[expect(clippy::wildcard_enum_match_arm, reason = "most errors are mended outside the text")]
     pub fn clause(&self) -> Option<String> {
         match self {
             Self::NotUtf8 { .. } => Some(clause("encoding", ["latin1"])),

@@ -7,7 +7,7 @@ mod ferry;
 mod ferry_waves;
 
 /// The name and the CSV text of every sample.
-pub fn tables() -> Vec<(&'static str, String)> {
+pub(crate) fn tables() -> Vec<(&'static str, String)> {
     vec![
         ("ferry", ferry::table()),
         ("ferry_waves", ferry_waves::table()),
