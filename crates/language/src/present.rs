@@ -90,9 +90,8 @@ mod tests {
     fn carets_stand_under_the_part_that_is_meant() {
         let document = Document::script("show omnibus of main\nshow é functons of main\n");
         let location = Location { source: SourceId(0), span: Span::new(29, 37) };
-        let diagnostic =
-            Diagnostic::error("unknown-view", location, "there is no view `functons`")
-                .help("did you mean `functions`?");
+        let diagnostic = Diagnostic::error("unknown-view", location, "there is no view `functons`")
+            .help("did you mean `functions`?");
         let shown = present(&diagnostic, &document, &|_| "a.tus:2".to_owned());
         assert_eq!(
             shown,

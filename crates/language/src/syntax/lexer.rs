@@ -190,7 +190,7 @@ fn long_string(lexer: &mut Lexer<'_, Raw>) {
         return lexer.bump(end);
     }
     let mut offset = 0;
-    for line in rest.split_inclusive('\n') {
+    for line in rest.split_inclusive(['\r', '\n']) {
         let word = line.split(|character: char| !character.is_alphabetic()).next();
         if offset > 0 && word.is_some_and(|word| crate::verbs::find(word).is_some()) {
             break;
@@ -259,6 +259,7 @@ mod tests {
     fn long_strings_cross_lines_and_an_open_one_stops_before_the_next_verb() {
         check("\"\"\"a\nb \"c\" \"\"\"", &[LongString]);
         check("\"\"\"a\nb\nshow", &[LongString, Newline, Name]);
+        check("\"\"\"a\rshow", &[LongString, Newline, Name]);
         check("\"\"\"a\nshown", &[LongString]);
     }
 
