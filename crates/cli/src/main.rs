@@ -2,6 +2,7 @@
 
 mod commands;
 mod output;
+mod problems;
 
 use std::process::ExitCode;
 

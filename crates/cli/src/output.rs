@@ -11,3 +11,8 @@ pub(crate) fn say(text: &str) {
 pub(crate) fn complain(text: &str) {
     let _closed = writeln!(std::io::stderr().lock(), "tussock: {text}");
 }
+
+/// Writes a text of several lines to standard error.
+pub(crate) fn warn(text: &str) {
+    let _closed = std::io::stderr().lock().write_all(text.as_bytes());
+}

@@ -56,24 +56,39 @@ pub(crate) fn answer(context: &Context<'_>, only: Option<SourceId>, cancel: &Can
             }),
         }
     }
-    let problems = statics.into_iter().map(|problem| Answer {
+    let problems = statics.iter().map(|problem| Answer {
         location: problem.location,
-        output: Output::Problem(problem),
+        output: Output::Problem(problem.clone()),
     });
     answers.list.extend(problems);
+    answers.list.retain(|answer| !is_allowed(context, answer));
     answers.list.sort_by_key(|answer| (answer.location.source, answer.location.span.start));
-    without_repeats(&mut answers);
+    without_repeats(&mut answers, &statics);
     answers
 }
 
-/// A problem that stands at one place is told there once.
-fn without_repeats(answers: &mut Answers) {
-    let mut told: Vec<Answer> = Vec::new();
+/// Whether the text silences a problem at its place.
+fn is_allowed(context: &Context<'_>, answer: &Answer) -> bool {
+    match &answer.output {
+        Output::Problem(problem) => {
+            context.model.without_allowed(vec![problem.clone()]).is_empty()
+        }
+        Output::Table(_) | Output::Paragraph(_) | Output::Note(_) | Output::Value(_) => false,
+    }
+}
+
+/// A problem is told once, where it first comes up; and what the text alone shows to be wrong is not
+/// told again by what depends on it.
+fn without_repeats(answers: &mut Answers, statics: &[Diagnostic]) {
+    let mut told: Vec<Diagnostic> = Vec::new();
     answers.list.retain(|answer| {
-        let is_problem = matches!(answer.output, Output::Problem(_));
-        let is_new = !is_problem || !told.contains(answer);
-        if is_problem && is_new {
-            told.push(answer.clone());
+        let Output::Problem(problem) = &answer.output else { return true };
+        let same_place = |known: &Diagnostic| {
+            known.location == problem.location && known.rule == problem.rule && known != problem
+        };
+        let is_new = !told.contains(problem) && !statics.iter().any(same_place);
+        if is_new {
+            told.push(problem.clone());
         }
         is_new
     });

@@ -6,8 +6,8 @@ use tussock_analysis::sample::Sample;
 use tussock_language::ast::{Better, ColumnSelection, Compare};
 use tussock_language::diagnostic::Diagnostic;
 use tussock_language::model::Located;
-use tussock_language::names::quoted;
-use tussock_language::span::{Location, Name};
+use tussock_language::names::{NumberRange, quoted};
+use tussock_language::span::{Location, Name, Span};
 use tussock_report::rich::Rich;
 
 use crate::evaluate::vector::Vector;
@@ -137,7 +137,7 @@ fn outcomes(statement: &Located<Compare>, table: &Relation) -> Answerable<Vec<Ou
                 list.push(outcome(table, &name.value, location));
             }
             ColumnSelection::Range { first, last } => {
-                let span = tussock_language::span::Span::new(first.span.start, last.span.end);
+                let span = Span::new(first.span.start, last.span.end);
                 let location = Location { source, span };
                 for name in range(table, &first.value, &last.value, location)? {
                     list.push(outcome(table, &name, location));
@@ -165,24 +165,11 @@ fn label(table: &Relation, column: &str) -> Rich {
     Rich::plain(table.label(column).map_or(column, |label| label.text.value.as_str()))
 }
 
-/// Every column with the stem of `first` and a number from that of `first` to that of `last`.
+/// Every column in a range such as `q1..q9`.
 fn range(table: &Relation, first: &str, last: &str, location: Location) -> Answerable<Vec<String>> {
-    let split = |name: &str| {
-        let stem = name.trim_end_matches(|c: char| c.is_ascii_digit()).to_owned();
-        let number: Option<u64> = name.get(stem.len()..).and_then(|digits| digits.parse().ok());
-        (stem, number)
-    };
-    let ((stem, from), (other, to)) = (split(first), split(last));
-    let names: Vec<String> = match (from, to) {
-        (Some(from), Some(to)) if stem == other => {
-            let within = |name: &String| {
-                let (its, number) = split(name);
-                its == stem && number.is_some_and(|number| (from..=to).contains(&number))
-            };
-            table.names().into_iter().filter(within).collect()
-        }
-        _ => Vec::new(),
-    };
+    let range = NumberRange::new(first, last);
+    let within = |name: &String| range.as_ref().is_some_and(|range| range.contains(name));
+    let names: Vec<String> = table.names().into_iter().filter(within).collect();
     if names.is_empty() {
         let message = format!("`{}` has no columns {first} to {last}", table.name);
         let help = "a range needs one stem and two numbers, as in `q1..q9`";
@@ -284,6 +271,9 @@ impl Flow {
     fn of(table: &Arc<Relation>) -> Self {
         let mut steps = Vec::new();
         for relation in ancestors(table) {
+            let selected = matches!(&relation.base, Base::Part { parent, .. }
+                if parent.name == relation.name);
+            let key = if selected { "selected" } else { &relation.name };
             steps.push(match &relation.base {
                 Base::File(frame) => Step {
                     key: "read".to_owned(),
@@ -292,7 +282,7 @@ impl Flow {
                     left_out: None,
                 },
                 Base::Part { rows, admission, .. } => Step {
-                    key: relation.name.clone(),
+                    key: key.to_owned(),
                     label: Rich::plain(admission.to_string()),
                     remaining: Count { total: rows.len(), groups: None },
                     left_out: Some(admission.excluded + admission.undecided),

@@ -1,7 +1,8 @@
 //! The groups of a comparison: a column's levels in their order, and each row's group.
 
+use tussock_data::frame::order;
 use tussock_language::diagnostic::Diagnostic;
-use tussock_language::names::quoted;
+use tussock_language::names::{listed, quoted};
 use tussock_language::span::Location;
 
 use crate::evaluate::Columns;
@@ -88,29 +89,10 @@ pub(crate) fn present(table: &Relation, column: &str) -> Answerable<Vec<String>>
     natural_order(table, column, Location::default())
 }
 
-/// Levels by number where all are numbers, else by text.
 fn natural_order(table: &Relation, column: &str, location: Location) -> Answerable<Vec<String>> {
     let Vector::Text(texts) = table.texts(column, location)? else { return Ok(Vec::new()) };
-    let mut levels: Vec<String> = Vec::new();
-    let mut seen = std::collections::BTreeSet::new();
-    for text in texts.iter().flatten() {
-        if seen.insert(text.as_str()) {
-            levels.push(text.clone());
-        }
-    }
-    let numbers: Option<Vec<f64>> =
-        levels.iter().map(|level| level.trim().parse().ok().filter(|x: &f64| !x.is_nan())).collect();
-    match numbers {
-        Some(numbers) => {
-            let mut keyed: Vec<(f64, String)> = numbers.into_iter().zip(levels).collect();
-            keyed.sort_by(|a, b| a.0.total_cmp(&b.0).then_with(|| a.1.cmp(&b.1)));
-            Ok(keyed.into_iter().map(|(_, level)| level).collect())
-        }
-        None => {
-            levels.sort();
-            Ok(levels)
-        }
-    }
+    let levels = order::levels(texts.iter().flatten().map(String::as_str), '.');
+    Ok(levels.into_iter().map(str::to_owned).collect())
 }
 
 fn too_few(column: &str, levels: &[String], location: Location) -> Box<Diagnostic> {
@@ -136,7 +118,7 @@ fn absent_level(
         Some(near) => found
             .help(format!("did you mean `{near}`?"))
             .replace_by(format!("Change to `{near}`"), quoted(near)),
-        None => found.help(format!("it has {}", listed(present))),
+        None => found.help(format!("it has {}", listed(present.iter().map(String::as_str)))),
     })
 }
 
@@ -160,8 +142,4 @@ fn unlisted_level(
         None => "name it in the order, or merge it into another level with `merging`".to_owned(),
     };
     trouble(Diagnostic::error("unlisted-level", location, message).help(help))
-}
-
-fn listed(levels: &[String]) -> String {
-    levels.iter().map(|level| format!("`{level}`")).collect::<Vec<_>>().join(", ")
 }

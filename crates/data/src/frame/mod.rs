@@ -6,7 +6,7 @@
 mod missing;
 mod not_a_number;
 mod number;
-mod order;
+pub mod order;
 
 use std::collections::BTreeMap;
 use std::sync::OnceLock;

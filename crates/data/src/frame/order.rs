@@ -7,7 +7,8 @@ use super::number::parse_number;
 
 /// The distinct texts among cells: numbers first, by their size and then by how they are written, then
 /// all others, by their characters. Letter case and blanks make texts distinct.
-pub(super) fn levels<'a>(cells: impl Iterator<Item = &'a str>, decimal: char) -> Vec<&'a str> {
+#[must_use]
+pub fn levels<'a>(cells: impl Iterator<Item = &'a str>, decimal: char) -> Vec<&'a str> {
     let distinct: BTreeSet<&str> = cells.collect();
     let mut keyed: Vec<(Option<f64>, &str)> =
         distinct.into_iter().map(|text| (parse_number(text, decimal).ok(), text)).collect();

@@ -5,6 +5,7 @@ use std::sync::Arc;
 
 use tussock_language::ast::{Expression, ExpressionKind, Operator};
 use tussock_language::diagnostic::Diagnostic;
+use tussock_language::names::listed;
 
 use super::Evaluator;
 use super::vector::Vector;
@@ -104,7 +105,9 @@ impl Comparing<'_> {
         if !is_equality(operator) {
             return Err(self.unordered(column));
         }
-        if !texts.iter().flatten().any(|text| text == level) {
+        // A bare name that is no level is a slip; a text in quotation marks may occur or not.
+        let is_bare = matches!(written.kind, ExpressionKind::Name(_));
+        if is_bare && !texts.iter().flatten().any(|text| text == level) {
             return Err(self.unknown_level(column, level, written, &texts));
         }
         Ok(Vector::truth(texts.iter().map(|text| {
@@ -161,7 +164,11 @@ impl Comparing<'_> {
         let candidates = levels.iter().chain(&columns).map(String::as_str);
         trouble(match nearest(level, candidates) {
             Some(near) => found.help(format!("did you mean `{near}`?")),
-            None => found.help(format!("{name} has {}", listed(&levels))),
+            None => {
+                let some = levels.iter().map(String::as_str).take(8);
+                let more = if levels.len() > 8 { ", among others" } else { "" };
+                found.help(format!("{name} has {}{more}", listed(some)))
+            }
         })
     }
 
@@ -169,12 +176,6 @@ impl Comparing<'_> {
         let message = "levels have no order by size: they can be equal, unequal or `in [...]`";
         trouble(Diagnostic::error("wrong-kind", self.0.location(column.span), message))
     }
-}
-
-fn listed(levels: &[String]) -> String {
-    let shown: Vec<String> = levels.iter().take(8).map(|level| format!("`{level}`")).collect();
-    let more = if levels.len() > shown.len() { " and more" } else { "" };
-    format!("{}{more}", shown.join(", "))
 }
 
 fn is_equality(operator: Operator) -> bool {

@@ -8,6 +8,7 @@ use tussock_report::table::{Column, Row, Table};
 use tussock_report::value::Value;
 
 use super::draft::{Draft, cite_test};
+use super::wording::refusal_note;
 use super::{Request, Shown, View};
 use crate::study::Study;
 use crate::trouble::Answerable;
@@ -48,7 +49,7 @@ impl View for Covariances {
                 let blank = Row::headed("Box’s *M*").text("covariance matrices");
                 table = table
                     .row((0..5).fold(blank, |row, _| row.undefined()))
-                    .note(Rich::plain(format!("Box’s M can’t be had: {}.", refused.message)));
+                    .note(Rich::from("No Box’s *M*: ").then(refusal_note(&refused.message)));
             }
         }
         let centres = [

@@ -8,7 +8,7 @@ use tussock_report::table::{Column, Row, Table};
 use tussock_report::value::{NumberStyle, Value};
 
 use super::draft::{Draft, cite_test, with};
-use super::wording::size_note;
+use super::wording::{refusal_note, size_note};
 use super::{Request, Shown, View};
 use crate::study::Study;
 use crate::trouble::Answerable;
@@ -54,7 +54,7 @@ impl View for Outcomes {
                     let refused = study.refuse_outcome(&error, index);
                     table = table
                         .row((0..6).fold(row, |row, _| row.undefined()))
-                        .note(Rich::plain(format!("{}.", refused.message)));
+                        .note(refusal_note(&refused.message));
                 }
             }
         }

@@ -49,18 +49,17 @@ impl Family {
         let size = self.p.len();
         let pairs = size.checked_div(count).unwrap_or_default();
         let slots = [
-            ("size", Rich::plain(size.to_string())),
-            ("count", Rich::plain(count.to_string())),
-            ("of", Rich::plain(of)),
-            ("pairs", Rich::plain(pairs.to_string())),
+            ("size", counted(size, "comparison")),
+            ("count", counted(count, of)),
+            ("pairs", counted(pairs, "pair")),
             ("df", Rich::plain(Value::df(self.df).text())),
             ("effect", effect_symbol(policy.effect)),
             ("level", Rich::plain(percent(policy.interval))),
         ];
         vec![
             Rich::fill(
-                "Adjusted *p*: the {size} comparisons of the table ({count} {of} × {pairs} pairs) \
-                 are one family. Bonferroni; Holm (1979).",
+                "Family of the adjusted *p*: all of the table, {size} ({count} × {pairs}). \
+                 Bonferroni; Holm (1979).",
                 &slots,
             ),
             Rich::fill(
@@ -75,6 +74,11 @@ impl Family {
             ),
         ]
     }
+}
+
+/// `1 pair`, `3 pairs`.
+fn counted(count: usize, of: &str) -> Rich {
+    Rich::plain(if count == 1 { format!("1 {of}") } else { format!("{count} {of}s") })
 }
 
 fn effect_note(effect: Effect) -> Rich {

@@ -74,7 +74,7 @@ impl View for Pairs {
                 table = table.row(place_pair(&mut draft, row, &cells, &keys));
             }
         }
-        for note in family.notes(comparison.outcomes.len() - undefined.len(), "outcomes", policy) {
+        for note in family.notes(comparison.outcomes.len() - undefined.len(), "outcome", policy) {
             table = table.note(note);
         }
         if !undefined.is_empty() {

@@ -123,10 +123,14 @@ fn pair_table(draft: &mut Draft, study: &Study, policy: &Policy) -> Answerable<T
             table = table.row(row.text(if below { "yes" } else { "no" }));
         }
     }
-    for note in family.notes(found.len(), "functions", policy) {
+    for note in family.notes(found.len(), "function", policy) {
         table = table.note(note);
     }
-    Ok(table.note(caution(&alpha)))
+    Ok(table.note(Rich::fill(
+        "As with the tests of the functions, the level is α = {alpha} because the scores are derived \
+         from these data.",
+        &[("alpha", Rich::plain(alpha))],
+    )))
 }
 
 /// Why the level is as low as it is.

@@ -63,3 +63,8 @@ pub(super) fn listed(names: &[Rich]) -> Rich {
         }
     }
 }
+
+/// A refusal as a sentence below a table, where names stand as they are.
+pub(super) fn refusal_note(message: &str) -> Rich {
+    Rich::plain(format!("{}.", message.replace('`', "")))
+}
