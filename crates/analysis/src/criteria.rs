@@ -49,19 +49,21 @@ pub struct Criterion {
 /// exact test.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Criteria {
-    /// Wilks' Λ = Π 1/(1 + λ) with the F of Rao (1951, Bulletin of the International Statistical
-    /// Institute 33); exact where s <= 2.
+    /// Wilks' Λ = Π 1/(1 + λ) (1932, Biometrika 24) with the F of Rao (1951, Bulletin of the
+    /// International Statistical Institute 33); exact where s <= 2.
     pub wilks: Criterion,
-    /// Pillai's trace V = Σ λ/(1 + λ) with the F of Pillai (1960, Statistical Tables for Tests of
-    /// Multivariate Hypotheses); exact where s = 1, else somewhat conservative.
+    /// Pillai's trace V = Σ λ/(1 + λ) (1955, Annals of Mathematical Statistics 26) with the F of Pillai
+    /// (1960, Statistical Tables for Tests of Multivariate Hypotheses); exact where s = 1, else
+    /// somewhat conservative.
     pub pillai: Criterion,
-    /// The Hotelling-Lawley trace U = Σ λ; exact where s = 1. Absent where s > 1 and df of the error
+    /// The Hotelling-Lawley trace U = Σ λ (Lawley 1938, Biometrika 30; Hotelling 1951, Proceedings of
+    /// the Second Berkeley Symposium); exact where s = 1. Absent where s > 1 and df of the error
     /// = p: neither approximation has degrees of freedom then.
     pub hotelling: Option<Criterion>,
     /// Which approximation tests the Hotelling-Lawley trace; absent where its test is exact or absent.
     pub hotelling_approximation: Option<TraceApproximation>,
-    /// Roy's criterion as the largest root λ1; exact where s = 1, else its F is an upper bound and its
-    /// p a lower bound.
+    /// Roy's criterion as the largest root λ1 (1953, Annals of Mathematical Statistics 24); exact where
+    /// s = 1, else its F is an upper bound and its p a lower bound.
     pub roy: Criterion,
     /// Roy's criterion as θ = λ1/(1 + λ1).
     pub roy_theta: f64,
@@ -69,10 +71,10 @@ pub struct Criteria {
 
 /// Computes the four criteria.
 ///
-/// The intervals, of the given `level`, invert the noncentral F of each test (O'Brien & Shieh 1999
-/// give the noncentralities): λ = N s V*/(s - V*) for V, N U* for U, N t (Λ*^(-1/t) - 1) for Λ, where *
-/// marks the population. With level 1 - 2α an interval excludes 0 exactly where p < α (Steiger 2004,
-/// Psychological Methods 9).
+/// The intervals, of the given `level`, invert the noncentral F of each test, with the
+/// noncentralities of O'Brien & Shieh (1999, manuscript): N s V/(s - V) for Pillai's trace, N U for the
+/// Hotelling-Lawley trace and N t (Λ^(-1/t) - 1) for Wilks' Λ, all three of the population. With level
+/// 1 - 2α an interval excludes 0 exactly where p < α (Steiger 2004, Psychological Methods 9).
 pub fn criteria(hypothesis: &Hypothesis, level: f64) -> Criteria {
     let setting = Setting::of(hypothesis);
     let roots = hypothesis.roots();

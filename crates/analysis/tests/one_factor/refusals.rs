@@ -189,9 +189,8 @@ fn the_group_of_two_among_the_pottery_refuses_the_covariance_test_only_as_a_whol
 fn a_group_that_is_large_enough_but_singular_is_named() {
     let whole = Scatter::new(5).sample(&[8, 8, 8], 3);
     let mut outcomes = columns(&whole);
-    for unit in 8..16 {
-        outcomes[2][unit] = outcomes[0][unit] - outcomes[1][unit];
-    }
+    let bent: Vec<f64> = (8..16).map(|unit| outcomes[0][unit] - outcomes[1][unit]).collect();
+    outcomes[2][8..16].copy_from_slice(&bent);
     let groups = whole.groups().to_vec();
     let bent = sample(&outcomes, groups.clone(), 3).unwrap();
     assert!(one_way(&bent).is_ok());
