@@ -439,6 +439,35 @@ fn a_pair_of_two_groups_is_the_square_root_of_the_analysis_of_variance() {
     }
 }
 
+/// Limits of the population effect to 17 digits, from inverting the noncentral t in 60-digit arithmetic.
+#[test]
+fn limits_of_a_standardized_difference_are_those_of_the_noncentral_t() {
+    let expected = [
+        (0.5, 20, 20, -0.13301811322887439, 1.1266612752942882),
+        (0.8, 10, 14, -0.05319923212233786, 1.636489426597316),
+        (-1.2, 8, 30, -2.0199445734082135, -0.3652329137817838),
+        (0.2, 500, 480, 0.0743923861860621, 0.3255058601354415),
+        (3.0, 6, 6, 1.2483221797610398, 4.689046893883398),
+        (0.05, 5000, 5000, 0.010793344963921824, 0.08920415530729109),
+        (6.5, 12, 12, 4.4197202752174665, 8.555737985758954),
+    ];
+    for (d, n1, n2, lower, upper) in expected {
+        // Values at equal distances on both sides of each mean make the pooled variance 1.
+        let n: usize = n1 + n2;
+        let distance = ((n - 2) as f64 / n as f64).sqrt();
+        let groups: Vec<usize> = (0..n).map(|unit| usize::from(unit >= n1)).collect();
+        let value = |unit: usize| {
+            let side = if unit.is_multiple_of(2) { distance } else { -distance };
+            side + if unit < n1 { d } else { 0.0 }
+        };
+        let values: Vec<f64> = (0..n).map(value).collect();
+        let pair = pairs(&values, &groups, 2, 0.95).unwrap().list[0];
+        near(pair.d, d, 1e-14);
+        near(pair.effect_interval.lower, lower, 1e-9);
+        near(pair.effect_interval.upper, upper, 1e-9);
+    }
+}
+
 #[test]
 fn limits_of_effect_sizes_are_where_the_noncentral_f_puts_its_tails() {
     let tail = (1.0 - LEVEL) / 2.0;
