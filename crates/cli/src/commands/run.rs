@@ -69,9 +69,9 @@ pub(crate) fn rendered(
 ) -> String {
     let page = page(opened, answers);
     match form {
-        Form::Text => render::page_text::page(&page),
-        Form::Html => render::page_html::page(&page),
-        Form::Md => render::page_markdown::page(&page),
+        Form::Text => (render::text::FORMAT.page)(&page),
+        Form::Html => (render::html::FORMAT.page)(&page),
+        Form::Md => (render::markdown::FORMAT.page)(&page),
         Form::Json => json(session, opened, answers, &page),
     }
 }
@@ -85,7 +85,7 @@ fn json(session: &Session, opened: &Opened, answers: &Answers, page: &Page) -> S
     let problems: Vec<Json> =
         answers.problems().map(|problem| problems::json(opened, problem)).collect();
     let whole = json!({
-        "document": render::page_json::value(page),
+        "document": render::json::page_value(page),
         "problems": problems,
         "values": values,
     });

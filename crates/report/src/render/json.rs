@@ -4,6 +4,7 @@ use serde_json::{Map, Value as Json, json};
 
 use super::Format;
 use super::page_json;
+use crate::page::Page;
 use crate::rich::Rich;
 use crate::table::{Cell, Column, ColumnKind, Placed, Row, Table};
 use crate::value::NumberStyle;
@@ -36,6 +37,12 @@ pub fn value(table: &Table) -> Json {
         "rows": table.rows.iter().map(row).collect::<Vec<_>>(),
         "notes": table.notes.iter().map(Rich::text).collect::<Vec<_>>(),
     })
+}
+
+/// A document as a JSON value, to be part of a larger one.
+#[must_use]
+pub fn page_value(page: &Page) -> Json {
+    super::page_json::value(page)
 }
 
 fn column(column: &Column) -> Json {

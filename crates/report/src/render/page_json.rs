@@ -6,9 +6,12 @@ use super::json;
 use crate::page::{Block, Page};
 
 pub(super) fn page(page: &Page) -> String {
+    format!("{:#}\n", value(page))
+}
+
+pub(super) fn value(page: &Page) -> Json {
     let blocks: Vec<Json> = page.blocks.iter().map(block).collect();
-    let page = json!({ "title": page.title, "language": page.language, "blocks": blocks });
-    format!("{page:#}\n")
+    json!({ "title": page.title, "language": page.language, "blocks": blocks })
 }
 
 fn block(block: &Block) -> Json {
