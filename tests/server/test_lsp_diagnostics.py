@@ -88,7 +88,7 @@ async def test_a_markdown_file_is_checked_in_its_fences_and_its_values(editor, f
     found = await editor.diagnosed(uri, 1)
     [mistake] = [d for d in found if d.severity == types.DiagnosticSeverity.Error]
     assert mistake.code == "unknown-path"
-    assert mistake.range.start.line == 8
+    assert mistake.range.start.line == 9
 
 
 @pytest.mark.asyncio

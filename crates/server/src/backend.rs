@@ -18,6 +18,10 @@ use crate::notebooks;
 use crate::outbox::Outbox;
 use crate::requests::{self, *};
 
+/// How many requests are worked on at a time: more than there are processors on most machines,
+/// because some of them wait for a check to end.
+const WORKERS: usize = 8;
+
 /// The server's side of one connection.
 #[derive(Debug)]
 pub struct Backend {
@@ -35,8 +39,7 @@ impl Backend {
     pub fn new(client: Client, pause: Duration) -> Self {
         let outbox = Outbox::open(client.clone());
         let documents = Documents::open(outbox.clone(), pause);
-        let workers = std::thread::available_parallelism().map_or(2, usize::from).max(2);
-        let workers = Arc::new(Semaphore::new(workers));
+        let workers = Arc::new(Semaphore::new(WORKERS));
         Self { client, documents, outbox, workers, abilities: OnceLock::new() }
     }
 
