@@ -4,8 +4,8 @@
 //! that compare groups: no leading zero where a quantity cannot exceed 1, a true minus sign, exact p
 //! values to three decimals and a floor below that. No number that differs from zero prints as
 //! zero, no bounded number that differs from one prints as one, zero has no sign, and what is not a
-//! finite number prints as a dash. Weights are the exception to the first of these: the exact size of
-//! one that is next to nothing says nothing.
+//! finite number prints as a dash. Quantities on a standardized scale are the exception: the exact size
+//! of one that is next to nothing says nothing.
 
 use crate::rich::unicode_superscript;
 use crate::value::NumberStyle;
@@ -34,8 +34,8 @@ pub(crate) fn text(number: f64, style: NumberStyle, decimals: Option<u8>) -> Str
         NumberStyle::P => probability(number, decimals.unwrap_or(3)),
         NumberStyle::Bounded(own) => bounded(number, decimals.unwrap_or(own)),
         NumberStyle::Statistic(own) => statistic(number, decimals.unwrap_or(own)),
-        NumberStyle::Weight(own) if number.abs() < LARGE => fixed(number, decimals.unwrap_or(own)),
-        NumberStyle::Weight(own) => scientific(number, decimals.unwrap_or(own)),
+        NumberStyle::Standardized(own) if number.abs() < LARGE => fixed(number, decimals.unwrap_or(own)),
+        NumberStyle::Standardized(own) => scientific(number, decimals.unwrap_or(own)),
         NumberStyle::Percent(own) => percent(number, decimals.unwrap_or(own)),
     }
 }
@@ -43,7 +43,7 @@ pub(crate) fn text(number: f64, style: NumberStyle, decimals: Option<u8>) -> Str
 /// The number as a limit of an interval, see [`crate::value::Value::limit_text`].
 pub(crate) fn limit_text(number: f64, style: NumberStyle) -> String {
     let own = match style {
-        NumberStyle::Bounded(own) | NumberStyle::Statistic(own) | NumberStyle::Weight(own) => own,
+        NumberStyle::Bounded(own) | NumberStyle::Statistic(own) | NumberStyle::Standardized(own) => own,
         NumberStyle::Count | NumberStyle::Df | NumberStyle::P | NumberStyle::Percent(_) => {
             return text(number, style, None);
         }

@@ -27,9 +27,9 @@ pub enum NumberStyle {
     Bounded(u8),
     /// Any other statistic, with this many decimals.
     Statistic(u8),
-    /// A weight among others, with this many decimals: what is next to nothing prints as zero, since
-    /// its exact size says nothing.
-    Weight(u8),
+    /// A quantity on a standardized scale, such as a weight, a score or a standardized difference, with
+    /// this many decimals: what is next to nothing prints as zero, since its exact size says nothing.
+    Standardized(u8),
     /// A percentage of a share, with this many decimals (`.995` prints `99.5`).
     Percent(u8),
 }

@@ -44,7 +44,7 @@ fn printed(rule: &Rule) -> String {
         "df" => (NumberStyle::Df, 1),
         "count" => (NumberStyle::Count, 1),
         "bounded" => (NumberStyle::Bounded(decimals(1)), 2),
-        "weight" => (NumberStyle::Weight(decimals(1)), 2),
+        "standardized" => (NumberStyle::Standardized(decimals(1)), 2),
         "statistic" => (NumberStyle::Statistic(decimals(1)), 2),
         "percent" => (NumberStyle::Percent(decimals(1)), 2),
         other => panic!("line {}: no style `{other}`", rule.line),

@@ -304,10 +304,6 @@ impl Columns for Relation {
         names.extend(self.derived.iter().map(|derive| derive.value.column.column.value.clone()));
         names
     }
-
-    fn table(&self) -> &str {
-        &self.name
-    }
 }
 
 fn number_text(value: f64) -> Option<String> {

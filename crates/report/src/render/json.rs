@@ -123,7 +123,7 @@ fn style_name(style: NumberStyle) -> &'static str {
         NumberStyle::P => "p",
         NumberStyle::Bounded(_) => "bounded",
         NumberStyle::Statistic(_) => "statistic",
-        NumberStyle::Weight(_) => "weight",
+        NumberStyle::Standardized(_) => "standardized",
         NumberStyle::Percent(_) => "share",
     }
 }

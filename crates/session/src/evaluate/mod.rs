@@ -26,8 +26,6 @@ pub(crate) trait Columns {
     fn texts(&self, name: &str, location: Location) -> Answerable<Vector>;
     /// The names of all columns.
     fn names(&self) -> Vec<String>;
-    /// What the table is called.
-    fn table(&self) -> &str;
 }
 
 /// Evaluates expressions of one source text over one table.

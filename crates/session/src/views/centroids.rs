@@ -5,7 +5,7 @@ use tussock_language::facts::Page;
 use tussock_report::citation::Citation;
 use tussock_report::rich::Rich;
 use tussock_report::table::{Column, Row, Table};
-use tussock_report::value::Value;
+use tussock_report::value::{NumberStyle, Value};
 
 use super::draft::{Draft, with};
 use super::wording::size_note;
@@ -50,7 +50,7 @@ impl View for Centroids {
             for (index, place) in places.iter().enumerate() {
                 let number = (index + 1).to_string();
                 let keys = [level.as_str(), number.as_str()];
-                let mean = Value::statistic(place.mean);
+                let mean = Value::new(place.mean, NumberStyle::Standardized(2));
                 let mut citation = Citation::new().value("*M*", mean);
                 row = row.number(draft.place(mean, &with(&keys, "mean")));
                 row = match place.sd {

@@ -32,11 +32,11 @@ const KINDS: [Kind; 4] = [
     Kind { name: "raw", style: NumberStyle::Statistic(3), pick: |found| &found.raw },
     Kind {
         name: "standardized",
-        style: NumberStyle::Weight(2),
+        style: NumberStyle::Standardized(2),
         pick: |found| &found.standardized,
     },
     Kind { name: "structure", style: NumberStyle::Bounded(2), pick: |found| &found.structure },
-    Kind { name: "share", style: NumberStyle::Weight(2), pick: |found| &found.share },
+    Kind { name: "share", style: NumberStyle::Standardized(2), pick: |found| &found.share },
 ];
 
 impl View for Coefficients {

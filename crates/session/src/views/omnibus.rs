@@ -160,7 +160,7 @@ impl Entry<'_> {
             | NumberStyle::P
             | NumberStyle::Percent(_)
             | NumberStyle::Statistic(_)
-            | NumberStyle::Weight(_) => NumberStyle::Statistic(2),
+            | NumberStyle::Standardized(_) => NumberStyle::Statistic(2),
         };
         let citation = Citation::new().value(self.symbol, Value { style, ..self.value });
         if self.is_bound() { citation } else { cite_test(citation, &self.criterion.test) }

@@ -154,7 +154,7 @@ pub(super) fn place_pair(
     keys: &[&str],
 ) -> Row {
     let pair_found = cells.pair;
-    let statistic = |number: f64| Value::new(number, NumberStyle::Statistic(2));
+    let standardized = |number: f64| Value::new(number, NumberStyle::Standardized(2));
     let measure = cells.measure;
     let (effect, other) = match cells.policy.effect {
         Effect::D => (("d", pair_found.d), ("g", pair_found.g)),
@@ -162,19 +162,19 @@ pub(super) fn place_pair(
     };
     let (lower, upper) = (pair_found.effect_interval.lower, pair_found.effect_interval.upper);
     draft.keep(Value::df(pair_found.df), &with(keys, "df"));
-    draft.keep(statistic(other.1), &with(keys, other.0));
-    draft.keep(statistic(lower), &with(keys, &format!("{}_lower", other.0)));
-    draft.keep(statistic(upper), &with(keys, &format!("{}_upper", other.0)));
+    draft.keep(standardized(other.1), &with(keys, other.0));
+    draft.keep(standardized(lower), &with(keys, &format!("{}_lower", other.0)));
+    draft.keep(standardized(upper), &with(keys, &format!("{}_upper", other.0)));
     let chosen = cells.chosen();
     let p_adjusted = draft.place_p(chosen, keys, "p_adjusted");
     draft.keep(p_adjusted.value, &with(keys, "p_adjusted"));
     let symbol = effect_symbol(cells.policy.effect);
     let citation = Citation::new()
         .value("*M*~diff~", measure(pair_found.difference))
-        .test("*t*", [Value::df(pair_found.df)], statistic(pair_found.t))
+        .test("*t*", [Value::df(pair_found.df)], standardized(pair_found.t))
         .value(adjusted_symbol(cells.policy.pairs), Value::p(chosen.p, chosen.ln_p))
-        .value(symbol, statistic(effect.1))
-        .interval(interval_head(cells.policy.interval), statistic(lower), statistic(upper));
+        .value(symbol, standardized(effect.1))
+        .interval(interval_head(cells.policy.interval), standardized(lower), standardized(upper));
     draft.cite(keys, citation);
 
     let p = draft.place_p(pair_found.p, keys, "p");
@@ -186,14 +186,14 @@ pub(super) fn place_pair(
             draft.place(measure(pair_found.interval.lower), &with(keys, "lower")),
             draft.place(measure(pair_found.interval.upper), &with(keys, "upper")),
         )
-        .number(draft.place(statistic(pair_found.t), &with(keys, "t")))
+        .number(draft.place(standardized(pair_found.t), &with(keys, "t")))
         .number(p)
         .number(bonferroni)
         .number(holm)
-        .number(draft.place(statistic(effect.1), &with(keys, effect.0)))
+        .number(draft.place(standardized(effect.1), &with(keys, effect.0)))
         .interval(
-            draft.place(statistic(lower), &with(keys, &format!("{}_lower", effect.0))),
-            draft.place(statistic(upper), &with(keys, &format!("{}_upper", effect.0))),
+            draft.place(standardized(lower), &with(keys, &format!("{}_lower", effect.0))),
+            draft.place(standardized(upper), &with(keys, &format!("{}_upper", effect.0))),
         )
 }
 

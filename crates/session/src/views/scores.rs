@@ -110,7 +110,7 @@ fn pair_table(draft: &mut Draft, study: &Study, policy: &Policy) -> Answerable<T
                 adjusted,
                 policy,
                 levels: &study.comparison.levels,
-                measure: &Value::statistic,
+                measure: &|number| Value::new(number, NumberStyle::Standardized(2)),
             };
             let first = cells.first().to_owned();
             let second = cells.second().to_owned();
