@@ -13,7 +13,9 @@ TIMEOUT = 60
 ESCAPES = re.compile(r"\x1b\[[0-9;]*m")
 
 # A whole analysis on the built-in sample, in the cells of a notebook.
-READ = "read sample ferry as crew\nlevels crew.roster fixed, forward, backward"
+READ = """\
+read sample ferry as crew
+levels crew.roster fixed, forward, backward merging "Forward " into forward"""
 COMPARE = "compare alertness, mood, lapses, sleep across roster in crew as main"
 ANALYSIS = f"{READ}\n{COMPARE}"
 
@@ -90,6 +92,13 @@ class Kernel:
         self.client.shell_channel.send(message)
         return message["header"]["msg_id"]
 
+    def wait_until_busy(self, message_id: str):
+        while True:
+            message = self.client.get_iopub_msg(timeout=TIMEOUT)
+            if message["parent_header"].get("msg_id") == message_id:
+                assert message["content"] == {"execution_state": "busy"}
+                return
+
     def receive(self, message_id: str) -> Ran:
         outputs = []
         while True:
@@ -113,6 +122,14 @@ class Kernel:
         while True:
             reply = self.client.get_shell_msg(timeout=TIMEOUT)
             if reply["parent_header"].get("msg_id") == message_id:
+                return reply["content"]
+
+    def interrupt(self) -> dict:
+        message = self.client.session.msg("interrupt_request", {})
+        self.client.control_channel.send(message)
+        while True:
+            reply = self.client.get_control_msg(timeout=TIMEOUT)
+            if reply["parent_header"].get("msg_id") == message["header"]["msg_id"]:
                 return reply["content"]
 
     def complete(self, marked: str) -> dict:

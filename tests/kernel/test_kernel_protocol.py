@@ -19,7 +19,7 @@ class TestTussock(KernelTests):
     completion_samples = [
         {"text": "sho", "matches": ["show"]},
         {"text": "show omn", "matches": ["omnibus"]},
-        {"text": "read sample fer", "matches": ["ferry"]},
+        {"text": "read sample bas", "matches": ["basil"]},
         {"text": "🌾 sho", "matches": []},
     ]
 
