@@ -1,7 +1,5 @@
 //! `tussock server`
 
-use std::process::ExitCode;
-
 use clap::Args;
 
 use super::Outcome;
@@ -16,7 +14,6 @@ pub(crate) struct Server {
 
 impl Server {
     pub(crate) fn run(self) -> Outcome {
-        tussock_server::run()?;
-        Ok(ExitCode::SUCCESS)
+        Ok(tussock_server::run()?)
     }
 }

@@ -86,6 +86,18 @@ async fn a_check_that_found_the_same_is_not_told_again() {
 }
 
 #[tokio::test]
+async fn a_byte_order_mark_is_no_part_of_the_first_statement() {
+    let mut editor = Editor::start().await;
+    editor.open(A, "tussock", "\u{feff}read sample ferry as crew\r\n");
+    assert_eq!(editor.diagnostics(A).await["diagnostics"], json!([]));
+    editor.change(A, 2, json!([replacement(0, 1, 5, "nonsense")]));
+    let found = editor.diagnostics(A).await;
+    assert_eq!(rules(&found), ["unknown-word"]);
+    assert_eq!(found["diagnostics"][0]["range"]["start"], json!({ "line": 0, "character": 1 }));
+    editor.finish().await;
+}
+
+#[tokio::test]
 async fn in_markdown_only_the_fences_are_code() {
     let mut editor = Editor::start().await;
     let text = "# Crews\n\nnonsense\n\n```tussock\nnonsense\n```\n\n```python\nnonsense\n```\n";
