@@ -3,7 +3,7 @@
 //! A notebook that was opened but not run is shown without style sheets and scripts; so whatever
 //! an output needs to look right is said inline.
 
-use maud::html;
+use maud::{Markup, html};
 use pulldown_cmark::{Options, Parser};
 use serde_json::{Value, json};
 use tussock_language::diagnostic::{Diagnostic, Severity};
@@ -109,17 +109,31 @@ fn remark(problem: &Diagnostic, reply: &Reply, place: &dyn Fn(Location) -> Strin
                 " "
                 span style="opacity:.75" { (problem.rule) ", " (place(problem.location)) }
             }
-            div { (problem.message) }
+            div { (with_code(&problem.message)) }
             @for related in &problem.related {
-                div { (related.message) " (" (place(related.location)) ")" }
+                div { (with_code(&related.message)) " (" (place(related.location)) ")" }
             }
             @if let Some(help) = &problem.help {
-                div style="opacity:.85" { "What to do: " (help) }
+                div style="opacity:.85" { "What to do: " (with_code(help)) }
             }
         }
     };
     let plain = present(problem, &reply.document, place);
     json!({ "text/html": callout.into_string(), "text/plain": plain.trim_end() })
+}
+
+/// A sentence whose words in back-quotes are set as code.
+fn with_code(sentence: &str) -> Markup {
+    let parts: Vec<&str> = sentence.split('`').collect();
+    // Quotes that don't come in pairs are text.
+    if parts.len().is_multiple_of(2) {
+        return html! { (sentence) };
+    }
+    html! {
+        @for (number, part) in parts.into_iter().enumerate() {
+            @if number % 2 == 1 { code { (part) } } @else { (part) }
+        }
+    }
 }
 
 fn capitalized(word: &str) -> String {
@@ -142,22 +156,25 @@ fn failure(reply: &Reply, place: &dyn Fn(Location) -> String) -> Option<Failure>
         return Some(stopped);
     }
     let first = errors.first()?;
-    traceback.iter_mut().for_each(|text| text.truncate(text.trim_end().len()));
+    // Front ends put the entries one below the other; a blank line divides them.
+    let last = traceback.len().saturating_sub(1);
+    traceback.iter_mut().take(last).for_each(|text| text.push('\n'));
     Some(Failure { name: first.rule.to_owned(), message: first.message.clone(), traceback })
 }
 
 const RED: &str = "\u{1b}[31m";
-const BOLD_RED: &str = "\u{1b}[1;31m";
+const BOLD: &str = "\u{1b}[1m";
 const NORMAL: &str = "\u{1b}[0m";
 
-/// The same text with the heading and the carets in red, by the escapes that every front end reads.
+/// The same text with its heading in bold and its carets in red, by the escapes that every front end
+/// reads. Bold red is hard to read on the dark red on which some front ends show errors.
 fn coloured(presented: &str) -> String {
     let mut lines: Vec<String> = presented.lines().map(coloured_line).collect();
     if let Some(heading) = lines.first_mut()
         && let Some(bracket) = heading.find("]:")
     {
         let (name, rest) = heading.split_at(bracket + 1);
-        *heading = format!("{BOLD_RED}{name}{NORMAL}{rest}");
+        *heading = format!("{BOLD}{name}{NORMAL}{rest}");
     }
     lines.join("\n")
 }
@@ -178,4 +195,28 @@ pub(crate) fn markdown(page: &str) -> Value {
     let mut html = String::new();
     pulldown_cmark::html::push_html(&mut html, Parser::new_ext(page, Options::ENABLE_TABLES));
     json!({ "text/html": html, "text/markdown": page, "text/plain": page })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn words_in_back_quotes_are_set_as_code_and_everything_is_escaped() {
+        assert_eq!(
+            with_code("there is no `<b>`, only `a`").into_string(),
+            "there is no <code>&lt;b&gt;</code>, only <code>a</code>"
+        );
+        assert_eq!(with_code("a ` alone").into_string(), "a ` alone");
+    }
+
+    #[test]
+    fn the_heading_is_bold_and_carets_alone_are_red() {
+        let text = "error [syntax]: a ^ does not belong [here]: no\n  cell [1], line 2\n  2 | x ^ 2\n    |   ^\n";
+        assert_eq!(
+            coloured(text),
+            "\u{1b}[1merror [syntax]\u{1b}[0m: a ^ does not belong [here]: no\n  cell [1], line 2\n  \
+             2 | x ^ 2\n    |   \u{1b}[31m^\u{1b}[0m"
+        );
+    }
 }

@@ -47,7 +47,7 @@ impl Signer {
 /// The bytes that hexadecimal digits write; nothing where they aren't pairs of such digits.
 fn bytes_of(hexadecimal: &[u8]) -> Option<Vec<u8>> {
     let text = std::str::from_utf8(hexadecimal).ok()?;
-    if text.len() % 2 != 0 || !text.bytes().all(|byte| byte.is_ascii_hexdigit()) {
+    if !text.len().is_multiple_of(2) || !text.bytes().all(|byte| byte.is_ascii_hexdigit()) {
         return None;
     }
     (0..text.len())
