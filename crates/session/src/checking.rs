@@ -20,7 +20,12 @@ pub(crate) fn check(context: &Context<'_>, cancel: &Cancel) -> Vec<Diagnostic> {
             study.hypothesis().map(drop)
         });
         if let Err(problem) = tested {
-            found.push(*problem);
+            let told = found
+                .iter()
+                .any(|known| known.location == problem.location && known.rule == problem.rule);
+            if !told {
+                found.push(*problem);
+            }
         }
     }
     found.sort_by_key(|problem| (problem.location, problem.rule));
