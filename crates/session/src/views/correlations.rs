@@ -64,8 +64,8 @@ impl View for Correlations {
             let (within, total) = (sd(&found.within_sd), sd(&found.total_sd));
             let name = outcome.name.as_str();
             table = table.row(
-                row.number(draft.place(measured(within, outcome), &["within", name, "sd"]))
-                    .number(draft.place(measured(total, outcome), &["total", name, "sd"])),
+                row.number(draft.place(measured(within, outcome), &["sd", "within", name]))
+                    .number(draft.place(measured(total, outcome), &["sd", "total", name])),
             );
         }
         for (kind, matrix) in [("within", &found.within), ("total", &found.total)] {
