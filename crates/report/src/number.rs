@@ -34,7 +34,9 @@ pub(crate) fn text(number: f64, style: NumberStyle, decimals: Option<u8>) -> Str
         NumberStyle::P => probability(number, decimals.unwrap_or(3)),
         NumberStyle::Bounded(own) => bounded(number, decimals.unwrap_or(own)),
         NumberStyle::Statistic(own) => statistic(number, decimals.unwrap_or(own)),
-        NumberStyle::Standardized(own) if number.abs() < LARGE => fixed(number, decimals.unwrap_or(own)),
+        NumberStyle::Standardized(own) if number.abs() < LARGE => {
+            fixed(number, decimals.unwrap_or(own))
+        }
         NumberStyle::Standardized(own) => scientific(number, decimals.unwrap_or(own)),
         NumberStyle::Percent(own) => percent(number, decimals.unwrap_or(own)),
     }
@@ -43,7 +45,9 @@ pub(crate) fn text(number: f64, style: NumberStyle, decimals: Option<u8>) -> Str
 /// The number as a limit of an interval, see [`crate::value::Value::limit_text`].
 pub(crate) fn limit_text(number: f64, style: NumberStyle) -> String {
     let own = match style {
-        NumberStyle::Bounded(own) | NumberStyle::Statistic(own) | NumberStyle::Standardized(own) => own,
+        NumberStyle::Bounded(own)
+        | NumberStyle::Statistic(own)
+        | NumberStyle::Standardized(own) => own,
         NumberStyle::Count | NumberStyle::Df | NumberStyle::P | NumberStyle::Percent(_) => {
             return text(number, style, None);
         }

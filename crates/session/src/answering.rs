@@ -29,6 +29,7 @@ pub(crate) fn answer(context: &Context<'_>, only: Option<SourceId>, cancel: &Can
     let statics: Vec<Diagnostic> = diagnose(&context.model, &Knowledge::borrowing(context))
         .into_iter()
         .filter(|problem| here(problem.location))
+        .map(|problem| if only.is_some() { with_hint_at_cells(problem) } else { problem })
         .collect();
     for note in definitions(context, &here) {
         put(note.location, note.output);
@@ -50,10 +51,9 @@ pub(crate) fn answer(context: &Context<'_>, only: Option<SourceId>, cancel: &Can
                     answers.list.push(Answer { location: question.location, output });
                 }
             }
-            Err(problem) => answers.list.push(Answer {
-                location: question.location,
-                output: Output::Problem(*problem),
-            }),
+            Err(problem) => answers
+                .list
+                .push(Answer { location: question.location, output: Output::Problem(*problem) }),
         }
     }
     let problems = statics.iter().map(|problem| Answer {
@@ -67,12 +67,24 @@ pub(crate) fn answer(context: &Context<'_>, only: Option<SourceId>, cancel: &Can
     answers
 }
 
+/// Where cells are run one by one, a name may be unknown because its cell has not been run yet, or
+/// not since the kernel was started again.
+fn with_hint_at_cells(problem: Diagnostic) -> Diagnostic {
+    if !matches!(problem.rule, "unknown-table" | "unknown-comparison") {
+        return problem;
+    }
+    let hint = "if a cell defines it, run the cell that does: nothing is kept over a restart";
+    let help = match &problem.help {
+        Some(help) => format!("{help}; {hint}"),
+        None => hint.to_owned(),
+    };
+    problem.help(help)
+}
+
 /// Whether the text silences a problem at its place.
 fn is_allowed(context: &Context<'_>, answer: &Answer) -> bool {
     match &answer.output {
-        Output::Problem(problem) => {
-            context.model.without_allowed(vec![problem.clone()]).is_empty()
-        }
+        Output::Problem(problem) => context.model.without_allowed(vec![problem.clone()]).is_empty(),
         Output::Table(_) | Output::Paragraph(_) | Output::Note(_) | Output::Value(_) => false,
     }
 }
@@ -124,9 +136,8 @@ fn definitions(context: &Context<'_>, here: &dyn Fn(Location) -> bool) -> Vec<An
     }
     for (name, statement) in &context.model.comparisons {
         if here(statement.location) {
-            let word = guarded(statement.location, || {
-                comparison_word(context, name, statement.location)
-            });
+            let word =
+                guarded(statement.location, || comparison_word(context, name, statement.location));
             list.push(word_or_problem(statement.location, word));
         }
     }

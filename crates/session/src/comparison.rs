@@ -10,8 +10,8 @@ use tussock_language::names::{NumberRange, quoted};
 use tussock_language::span::{Location, Name, Span};
 use tussock_report::rich::Rich;
 
-use crate::evaluate::vector::Vector;
 use crate::evaluate::Columns;
+use crate::evaluate::vector::Vector;
 use crate::factor::{Factor, factor};
 use crate::flow::{Count, Flow, Missing, Step};
 use crate::relation::{Base, Condition, Relation};
@@ -246,11 +246,10 @@ fn sample(
     let outcomes_matrix = nalgebra::DMatrix::from_fn(kept.len(), columns.len(), value);
     let codes = kept.iter().map(|(_, group)| *group).collect();
     Sample::new(outcomes_matrix, codes, groups.levels.len()).map_err(|error| {
-        crate::refusal::refusal(&error, &crate::refusal::Names {
-            outcomes,
-            levels: &groups.levels,
-            factor: location,
-        })
+        crate::refusal::refusal(
+            &error,
+            &crate::refusal::Names { outcomes, levels: &groups.levels, factor: location },
+        )
     })
 }
 

@@ -134,9 +134,10 @@ impl<'a> Context<'a> {
         let place = place_key(statement);
         let parts = [relation.fingerprint.bytes(), text.as_bytes(), place.as_bytes()];
         self.session.studies.get_or_make(Fingerprint::of(parts), || {
-            let condition = compare.condition.as_ref().map_or("", |condition| {
-                self.written(Location { source, span: condition.span })
-            });
+            let condition = compare
+                .condition
+                .as_ref()
+                .map_or("", |condition| self.written(Location { source, span: condition.span }));
             let comparison = Comparison::gather(statement, &relation, condition)?;
             Ok(Arc::new(Study::new(comparison)))
         })
@@ -191,12 +192,8 @@ impl<'a> Context<'a> {
         let names: Vec<&str> = known.map(String::as_str).collect();
         trouble(match (nearest(name, names.iter().copied()), kind) {
             (Some(near), _) => found.help(format!("did you mean `{near}`?")),
-            (None, "table") => {
-                found.help("define it with `read` or `admit`; in a notebook, run the cell that does")
-            }
-            (None, "comparison") => {
-                found.help("define it with `compare`; in a notebook, run the cell that does")
-            }
+            (None, "table") => found.help("define it with `read` or `admit`"),
+            (None, "comparison") => found.help("define it with `compare`"),
             (None, _) => found.help(format!("there are {}", names.join(", "))),
         })
     }
@@ -239,9 +236,9 @@ pub(crate) fn view(name: &str, location: Location) -> Answerable<&'static dyn Vi
         let found =
             Diagnostic::error("unknown-view", location, format!("there is no view `{name}`"));
         trouble(match nearest(name, names.clone()) {
-            Some(near) => {
-                found.help(format!("did you mean `{near}`?")).replace_by(format!("Change to `{near}`"), near)
-            }
+            Some(near) => found
+                .help(format!("did you mean `{near}`?"))
+                .replace_by(format!("Change to `{near}`"), near),
             None => found.help(format!("there are {}", names.collect::<Vec<_>>().join(", "))),
         })
     })

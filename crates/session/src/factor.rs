@@ -62,7 +62,11 @@ pub(crate) fn factor(table: &Relation, column: &str, location: Location) -> Answ
 }
 
 /// The levels of a column in their order.
-pub(crate) fn levels(table: &Relation, column: &str, location: Location) -> Answerable<Vec<String>> {
+pub(crate) fn levels(
+    table: &Relation,
+    column: &str,
+    location: Location,
+) -> Answerable<Vec<String>> {
     let Some((stated_for, stated)) = table.stated_levels(column) else {
         return natural_order(table, column, location);
     };
@@ -130,9 +134,10 @@ fn unlisted_level(
 ) -> Box<Diagnostic> {
     let message = format!("`{column}` also has the level `{level}`, which this order leaves out");
     let trimmed = level.trim().to_lowercase();
-    let same = order.iter().map(|name| name.value.as_str()).find(|name| {
-        name.trim().to_lowercase() == trimmed || nearest(level, [*name]).is_some()
-    });
+    let same = order
+        .iter()
+        .map(|name| name.value.as_str())
+        .find(|name| name.trim().to_lowercase() == trimmed || nearest(level, [*name]).is_some());
     let help = match same {
         Some(near) => format!(
             "if it is another spelling of `{near}`, add `merging \"{level}\" into {}`; \

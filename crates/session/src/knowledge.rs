@@ -132,7 +132,12 @@ impl Facts for Knowledge<'_> {
             let detail = at(&shown, &whole).map(|found| found.rich(None).text());
             KeyFact { key, detail: detail.unwrap_or_default() }
         };
-        keys_after(&shown, &full).into_iter().map(fact).collect()
+        let mut facts: Vec<KeyFact> = keys_after(&shown, &full).into_iter().map(fact).collect();
+        // The term may be written or left out.
+        if let (true, Some(term)) = (full.len() == path.len() + 1 && path.len() == 2, full.last()) {
+            facts.push(KeyFact { key: term.clone(), detail: "the term of the design".to_owned() });
+        }
+        facts
     }
 
     fn value(&self, path: &[String]) -> Option<String> {

@@ -11,9 +11,10 @@ use crate::files::Opened;
 /// Prose as it stands, live values put in, code, and after the code what it answered.
 #[must_use]
 pub fn page(opened: &Opened, answers: &Answers) -> Page {
-    let title = opened.path.file_stem().map_or_else(String::new, |stem| {
-        stem.to_string_lossy().into_owned()
-    });
+    let title = opened
+        .path
+        .file_stem()
+        .map_or_else(String::new, |stem| stem.to_string_lossy().into_owned());
     let mut page = Page::new(title);
     for (index, source) in opened.document.sources.iter().enumerate() {
         let id = SourceId(index);

@@ -82,9 +82,7 @@ pub(crate) fn refusal(error: &AnalysisError, names: &Names<'_>) -> Box<Diagnosti
         AnalysisError::TooManyOutcomes { outcomes, df_error } => Diagnostic::error(
             "too-many-outcomes",
             names.outcomes.first().map_or(names.factor, |outcome| outcome.location),
-            format!(
-                "{outcomes} outcomes are too many for {df_error} degrees of freedom for error"
-            ),
+            format!("{outcomes} outcomes are too many for {df_error} degrees of freedom for error"),
         )
         .help(format!("compare at most {df_error} outcomes at once, better far fewer")),
     })

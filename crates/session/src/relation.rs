@@ -246,12 +246,10 @@ impl Relation {
             Base::File(frame) => {
                 frame.texts(column).ok_or_else(|| self.unknown_column(column, location))
             }
-            Base::Part { parent, rows, .. } => {
-                match parent.texts(column, location)?.select(rows) {
-                    Vector::Text(texts) => Ok(texts.to_vec()),
-                    Vector::Number(_) | Vector::Truth(_) => Ok(Vec::new()),
-                }
-            }
+            Base::Part { parent, rows, .. } => match parent.texts(column, location)?.select(rows) {
+                Vector::Text(texts) => Ok(texts.to_vec()),
+                Vector::Number(_) | Vector::Truth(_) => Ok(Vec::new()),
+            },
         }
     }
 }

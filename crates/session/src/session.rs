@@ -115,8 +115,7 @@ impl Session {
             return Ok((Arc::new(frame), Fingerprint::of([path.as_bytes()])));
         };
         let key = frame_key(content, path.as_bytes(), options);
-        let frame =
-            self.frames.get_or_make(key, || read_file(&full, options).map(Arc::new))?;
+        let frame = self.frames.get_or_make(key, || read_file(&full, options).map(Arc::new))?;
         Ok((frame, key))
     }
 

@@ -55,20 +55,26 @@ impl Study {
 
     /// A refusal of the analysis in the analyst's own names.
     pub(crate) fn refuse(&self, error: &AnalysisError) -> Box<Diagnostic> {
-        refusal(error, &Names {
-            outcomes: &self.comparison.outcomes,
-            levels: &self.comparison.levels,
-            factor: self.comparison.factor_location,
-        })
+        refusal(
+            error,
+            &Names {
+                outcomes: &self.comparison.outcomes,
+                levels: &self.comparison.levels,
+                factor: self.comparison.factor_location,
+            },
+        )
     }
 
     /// A refusal of an analysis of one outcome alone, in the analyst's own names.
     pub(crate) fn refuse_outcome(&self, error: &AnalysisError, outcome: usize) -> Box<Diagnostic> {
         let outcomes = self.comparison.outcomes.get(outcome..=outcome).unwrap_or_default();
-        refusal(error, &Names {
-            outcomes,
-            levels: &self.comparison.levels,
-            factor: self.comparison.factor_location,
-        })
+        refusal(
+            error,
+            &Names {
+                outcomes,
+                levels: &self.comparison.levels,
+                factor: self.comparison.factor_location,
+            },
+        )
     }
 }

@@ -26,8 +26,8 @@ impl Format {
     pub(crate) fn run(self) -> Outcome {
         let mut changed = false;
         for file in &self.files {
-            let before = fs::read_to_string(file)
-                .map_err(|error| format!("{}: {error}", file.display()))?;
+            let before =
+                fs::read_to_string(file).map_err(|error| format!("{}: {error}", file.display()))?;
             let after = formatted(file, &before)?;
             if before == after {
                 continue;

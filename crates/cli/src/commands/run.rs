@@ -52,8 +52,9 @@ impl Run {
         problems::tell(&opened, answers.problems());
         let text = rendered(&session, &opened, &answers, self.to);
         match &self.out {
-            Some(path) => fs::write(path, text)
-                .map_err(|error| format!("{}: {error}", path.display()))?,
+            Some(path) => {
+                fs::write(path, text).map_err(|error| format!("{}: {error}", path.display()))?
+            }
             None => say(&text),
         }
         Ok(if answers.failed() { ExitCode::FAILURE } else { ExitCode::SUCCESS })

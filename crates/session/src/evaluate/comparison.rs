@@ -32,15 +32,15 @@ impl Comparing<'_> {
         match (&first, &second) {
             (Vector::Number(first), Vector::Number(second)) => {
                 let pairs = first.iter().zip(second.iter());
-                Ok(Vector::truth(pairs.map(|(a, b)| {
-                    a.partial_cmp(b).map(|order| holds(operator, order))
-                })))
+                Ok(Vector::truth(
+                    pairs.map(|(a, b)| a.partial_cmp(b).map(|order| holds(operator, order))),
+                ))
             }
             (Vector::Text(first), Vector::Text(second)) if is_equality(operator) => {
                 let pairs = first.iter().zip(second.iter());
-                Ok(Vector::truth(pairs.map(|(a, b)| {
-                    Some(holds(operator, a.as_ref()?.cmp(b.as_ref()?)))
-                })))
+                Ok(Vector::truth(
+                    pairs.map(|(a, b)| Some(holds(operator, a.as_ref()?.cmp(b.as_ref()?)))),
+                ))
             }
             (Vector::Text(_), Vector::Text(_)) => Err(self.unordered(left)),
             (Vector::Number(_) | Vector::Text(_) | Vector::Truth(_), _) => {
@@ -110,9 +110,9 @@ impl Comparing<'_> {
         if is_bare && !texts.iter().flatten().any(|text| text == level) {
             return Err(self.unknown_level(column, level, written, &texts));
         }
-        Ok(Vector::truth(texts.iter().map(|text| {
-            Some(holds(operator, text.as_deref()?.cmp(level)))
-        })))
+        Ok(Vector::truth(
+            texts.iter().map(|text| Some(holds(operator, text.as_deref()?.cmp(level)))),
+        ))
     }
 
     fn texts(&self, column: &Expression) -> Answerable<Arc<Vec<Option<String>>>> {

@@ -44,9 +44,7 @@ impl Evaluator<'_> {
         match &expression.kind {
             ExpressionKind::Number(number) => Ok(Vector::number(vec![*number; rows])),
             ExpressionKind::Text(text) => Ok(Vector::text(vec![Some(text.clone()); rows])),
-            ExpressionKind::Name(name) => {
-                self.columns.column(name, self.location(expression.span))
-            }
+            ExpressionKind::Name(name) => self.columns.column(name, self.location(expression.span)),
             ExpressionKind::Negate(inner) => {
                 let values = self.numbers(inner)?;
                 Ok(Vector::number(values.iter().map(|value| -value)))
@@ -55,9 +53,7 @@ impl Evaluator<'_> {
                 let values = self.truths(inner)?;
                 Ok(Vector::truth(values.iter().map(|value| value.map(|value| !value))))
             }
-            ExpressionKind::Binary { left, operator, right } => {
-                self.binary(left, *operator, right)
-            }
+            ExpressionKind::Binary { left, operator, right } => self.binary(left, *operator, right),
             ExpressionKind::If { condition, then, otherwise } => {
                 self.choice(condition, then, otherwise)
             }
@@ -200,7 +196,9 @@ impl Evaluator<'_> {
             arguments.iter().map(|one| self.evaluate(one)).collect::<Answerable<Vec<_>>>()?;
         found.call(&arguments).map_err(|refusal| {
             let message = format!("`{}` {refusal}", function.value);
-            trouble(Diagnostic::error("wrong-argument", location, message).help(found.page().summary))
+            trouble(
+                Diagnostic::error("wrong-argument", location, message).help(found.page().summary),
+            )
         })
     }
 }

@@ -6,7 +6,8 @@ use crate::evaluate::vector::Vector;
 /// `abs`
 pub(super) struct Abs;
 
-static PAGE: Page = Page { name: "abs", summary: "abs(a): the absolute value", text: include_str!("abs.md") };
+static PAGE: Page =
+    Page { name: "abs", summary: "abs(a): the absolute value", text: include_str!("abs.md") };
 
 impl Function for Abs {
     fn page(&self) -> &'static Page {

@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `log`
 pub(super) struct Log;
 
-static PAGE: Page = Page { name: "log", summary: "log(a): the natural logarithm; missing where a is not above 0", text: include_str!("log.md") };
+static PAGE: Page = Page {
+    name: "log",
+    summary: "log(a): the natural logarithm; missing where a is not above 0",
+    text: include_str!("log.md"),
+};
 
 impl Function for Log {
     fn page(&self) -> &'static Page {

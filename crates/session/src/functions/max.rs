@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `max`
 pub(super) struct Max;
 
-static PAGE: Page = Page { name: "max", summary: "max(a, b, ...): the largest in each row", text: include_str!("max.md") };
+static PAGE: Page = Page {
+    name: "max",
+    summary: "max(a, b, ...): the largest in each row",
+    text: include_str!("max.md"),
+};
 
 impl Function for Max {
     fn page(&self) -> &'static Page {

@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `mean`
 pub(super) struct Mean;
 
-static PAGE: Page = Page { name: "mean", summary: "mean(a, b, ...): the mean in each row", text: include_str!("mean.md") };
+static PAGE: Page = Page {
+    name: "mean",
+    summary: "mean(a, b, ...): the mean in each row",
+    text: include_str!("mean.md"),
+};
 
 impl Function for Mean {
     fn page(&self) -> &'static Page {

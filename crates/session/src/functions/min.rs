@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `min`
 pub(super) struct Min;
 
-static PAGE: Page = Page { name: "min", summary: "min(a, b, ...): the smallest in each row", text: include_str!("min.md") };
+static PAGE: Page = Page {
+    name: "min",
+    summary: "min(a, b, ...): the smallest in each row",
+    text: include_str!("min.md"),
+};
 
 impl Function for Min {
     fn page(&self) -> &'static Page {

@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `sqrt`
 pub(super) struct Sqrt;
 
-static PAGE: Page = Page { name: "sqrt", summary: "sqrt(a): the square root; missing where a is below 0", text: include_str!("sqrt.md") };
+static PAGE: Page = Page {
+    name: "sqrt",
+    summary: "sqrt(a): the square root; missing where a is below 0",
+    text: include_str!("sqrt.md"),
+};
 
 impl Function for Sqrt {
     fn page(&self) -> &'static Page {

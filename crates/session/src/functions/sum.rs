@@ -6,7 +6,11 @@ use crate::evaluate::vector::Vector;
 /// `sum`
 pub(super) struct Sum;
 
-static PAGE: Page = Page { name: "sum", summary: "sum(a, b, ...): the sum in each row", text: include_str!("sum.md") };
+static PAGE: Page = Page {
+    name: "sum",
+    summary: "sum(a, b, ...): the sum in each row",
+    text: include_str!("sum.md"),
+};
 
 impl Function for Sum {
     fn page(&self) -> &'static Page {

@@ -52,13 +52,11 @@ impl View for Coefficients {
         let comparison = &study.comparison;
         let found = &study.discriminant()?.coefficients;
         let count = found.raw.ncols();
-        let wanted = |kind: &Kind| {
-            request.coefficients.as_ref().is_none_or(|wanted| wanted == kind.name)
-        };
+        let wanted =
+            |kind: &Kind| request.coefficients.as_ref().is_none_or(|wanted| wanted == kind.name);
         let mut draft = Draft::of_term(study, PAGE.name);
-        let mut table =
-            Table::new("Coefficients of the discriminant functions")
-                .column(Column::row_head("Outcome"));
+        let mut table = Table::new("Coefficients of the discriminant functions")
+            .column(Column::row_head("Outcome"));
         for function in 0..count {
             for kind in KINDS.iter().filter(|kind| wanted(kind)) {
                 let spanner = Rich::plain(format!("Function {}", function + 1));

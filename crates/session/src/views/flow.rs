@@ -31,10 +31,10 @@ impl View for Flow {
     fn show(&self, study: &Study, _: &Request) -> Answerable<Shown> {
         let comparison = &study.comparison;
         let mut draft = Draft::new(study, PAGE.name);
-        let title = Rich::fill("Rows on their way into the comparison {name}", &[(
-            "name",
-            Rich::plain(&comparison.name),
-        )]);
+        let title = Rich::fill(
+            "Rows on their way into the comparison {name}",
+            &[("name", Rich::plain(&comparison.name))],
+        );
         let mut table = Table::new(title)
             .column(Column::row_head("Step"))
             .column(Column::value("Left out"))
@@ -45,9 +45,7 @@ impl View for Flow {
         for step in &comparison.flow.steps {
             let row = Row::headed(step.label.clone());
             let row = match step.left_out {
-                Some(rows) => {
-                    row.number(draft.place(Value::count(rows), &[&step.key, "left_out"]))
-                }
+                Some(rows) => row.number(draft.place(Value::count(rows), &[&step.key, "left_out"])),
                 None => row.empty(),
             };
             table = table.row(count_cells(&draft, row, &step.remaining, &[&step.key], study));

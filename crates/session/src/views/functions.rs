@@ -33,8 +33,8 @@ impl View for Functions {
     fn show(&self, study: &Study, _: &Request) -> Answerable<Shown> {
         let found = functions(study.hypothesis()?);
         let mut draft = Draft::of_term(study, PAGE.name);
-        let title = Rich::from("Discriminant functions for ")
-            .then(study.comparison.factor_label.clone());
+        let title =
+            Rich::from("Discriminant functions for ").then(study.comparison.factor_label.clone());
         let test = || Rich::from("Test of this function and all later ones");
         let mut table = Table::new(title)
             .column(Column::row_head("Function"))
@@ -74,10 +74,7 @@ fn row(draft: &mut Draft, function: &DiscriminantFunction, number: usize, of: us
             Value::new(function.eigenvalue, NumberStyle::Statistic(3)),
             &[&key, "eigenvalue"],
         ))
-        .number(draft.place(
-            Value::new(function.share, NumberStyle::Percent(1)),
-            &[&key, "share"],
-        ))
+        .number(draft.place(Value::new(function.share, NumberStyle::Percent(1)), &[&key, "share"]))
         .number(draft.place(three(function.canonical), &[&key, "canonical"]))
         .text(Rich::plain(tested))
         .number(draft.place(three(function.wilks), &[&key, "wilks"]));

@@ -36,8 +36,7 @@ impl View for Groups {
         let level = request.policy.interval;
         let described = describe(&comparison.sample, level);
         let mut draft = Draft::new(study, PAGE.name);
-        let title =
-            Rich::from("Outcomes by ").then(comparison.factor_label.clone());
+        let title = Rich::from("Outcomes by ").then(comparison.factor_label.clone());
         let mut table = Table::new(title)
             .column(Column::row_head("Outcome"))
             .column(Column::row_head(comparison.factor_label.clone()))
@@ -62,11 +61,14 @@ impl View for Groups {
             draft.cite(&[name], Citation::new().value("*n*", Value::count(*size)));
         }
         table = table.note(size_note(comparison));
-        table = table.note(format!(
-            "*SE* = standard error; CI = confidence interval ({}) of the group's mean, from \
+        table = table.note(
+            format!(
+                "*SE* = standard error; CI = confidence interval ({}) of the group's mean, from \
              its own *SD*. Intervals of single means do not tell whether means differ: see pairs.",
-            percent(level)
-        ).as_str());
+                percent(level)
+            )
+            .as_str(),
+        );
         if comparison.sample.group_sizes().contains(&1) {
             table = table.note("A group of one has no standard deviation.");
         }
@@ -83,9 +85,8 @@ fn described_cells(
     level: &str,
 ) -> Row {
     let keys = [level, outcome.name.as_str()];
-    let value = |number: f64, key: &'static str| {
-        draft.place(measured(number, outcome), &with(&keys, key))
-    };
+    let value =
+        |number: f64, key: &'static str| draft.place(measured(number, outcome), &with(&keys, key));
     let row = row
         .number(draft.place(Value::count(cell.n), &[level, "n"]))
         .number(value(cell.mean, "mean"));

@@ -61,7 +61,10 @@ impl View for Omnibus {
             draft.cite(&[entry.key], entry.citation());
         }
         draft.keep(Value::bounded(found.roy_theta), &["roy", "theta"]);
-        draft.keep(Value::new(found.wilks.ln_value, NumberStyle::Statistic(4)), &["wilks", "ln_value"]);
+        draft.keep(
+            Value::new(found.wilks.ln_value, NumberStyle::Statistic(4)),
+            &["wilks", "ln_value"],
+        );
         table = table.note(size_note(&study.comparison)).note(
             "η^2^ is each criterion’s own: 1 − Λ^1/s^, *V*/*s*, *U*/(*U* + *s*) and \
              θ = λ~1~/(1 + λ~1~), with *s* the number of functions; all are biased upwards.",
@@ -75,12 +78,6 @@ impl View for Omnibus {
 }
 
 fn entries(found: &Criteria) -> Vec<Entry<'_>> {
-    let trace = if found.pillai.value > 1.0 || found.pillai.exactness != Exactness::Exact {
-        // A trace can exceed 1 as soon as there are two functions, so its zero is printed.
-        NumberStyle::Statistic(3)
-    } else {
-        NumberStyle::Bounded(3)
-    };
     let hotelling = found.hotelling.as_ref().map(|criterion| Entry {
         key: "hotelling",
         name: "Hotelling–Lawley",
@@ -105,17 +102,17 @@ fn entries(found: &Criteria) -> Vec<Entry<'_>> {
             name: "Pillai",
             symbol: "*V*",
             criterion: &found.pillai,
-            value: Value::new(found.pillai.value, trace),
+            value: Value::new(found.pillai.value, NumberStyle::Bounded(3)),
         },
     ];
     list.extend(hotelling);
     list.push(Entry {
-            key: "roy",
-            name: "Roy",
-            symbol: "λ~1~",
-            criterion: &found.roy,
-            value: Value::new(found.roy.value, NumberStyle::Statistic(3)),
-        });
+        key: "roy",
+        name: "Roy",
+        symbol: "λ~1~",
+        criterion: &found.roy,
+        value: Value::new(found.roy.value, NumberStyle::Statistic(3)),
+    });
     list
 }
 
@@ -167,15 +164,21 @@ impl Entry<'_> {
     }
 }
 
+/// A lower bound of a p value. Unlike a p value itself it keeps its figures where it is small, since
+/// the true p may lie far above it.
+fn bound_text(bound: f64) -> String {
+    let style = if bound < 0.001 { NumberStyle::Statistic(3) } else { NumberStyle::P };
+    Value::new(bound, style).text()
+}
+
 fn notes(found: &Criteria) -> Vec<Rich> {
     let mut notes = Vec::new();
     if found.roy.exactness == Exactness::Bound {
-        let bound = Value::p(found.roy.test.p.p, found.roy.test.p.ln_p).text();
         notes.push(Rich::fill(
-            "Roy’s *F* is an upper bound, so it gives no *p* value: it only says that *p* is not \
-             below {bound}; with a true null hypothesis the bound falls below .05 far more often \
-             than in 5% of samples. η^2^ for Roy has no interval for the same reason.",
-            &[("bound", Rich::plain(bound.trim_start_matches("< ").to_owned()))],
+            "Roy’s *F* is an upper bound, so it gives no *p* value: it only says that *p* is at \
+             least {bound}, which with a true null hypothesis falls below .05 far more often than \
+             in 5% of samples. η^2^ for Roy has no interval for the same reason.",
+            &[("bound", Rich::plain(bound_text(found.roy.test.p.p)))],
         ));
     }
     let approximations = match (found.pillai.exactness, found.hotelling_approximation) {

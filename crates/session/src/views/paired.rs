@@ -41,7 +41,11 @@ impl Family {
     /// The adjusted p values, in the order of the rows.
     pub(super) fn adjusted(&self) -> Vec<Adjusted> {
         let (bonferroni, holm) = (bonferroni(&self.p), holm(&self.p));
-        bonferroni.into_iter().zip(holm).map(|(bonferroni, holm)| Adjusted { bonferroni, holm }).collect()
+        bonferroni
+            .into_iter()
+            .zip(holm)
+            .map(|(bonferroni, holm)| Adjusted { bonferroni, holm })
+            .collect()
     }
 
     /// What the table says of how it was computed.
@@ -147,12 +151,7 @@ impl PairCells<'_> {
 }
 
 /// Adds the cells of a pair to a row and keeps its values and its citation.
-pub(super) fn place_pair(
-    draft: &mut Draft,
-    row: Row,
-    cells: &PairCells<'_>,
-    keys: &[&str],
-) -> Row {
+pub(super) fn place_pair(draft: &mut Draft, row: Row, cells: &PairCells<'_>, keys: &[&str]) -> Row {
     let pair_found = cells.pair;
     let standardized = |number: f64| Value::new(number, NumberStyle::Standardized(2));
     let measure = cells.measure;

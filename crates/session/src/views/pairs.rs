@@ -9,11 +9,11 @@ use tussock_report::table::{Column, Row, Table};
 use tussock_report::value::Value;
 
 use super::draft::Draft;
+use super::paired::{Family, PairCells, effect_symbol, pair_columns, place_pair};
 use super::wording::{listed, measured, outcome_head};
 use super::{Request, Shown, View};
 use crate::study::Study;
 use crate::trouble::Answerable;
-use super::paired::{Family, PairCells, effect_symbol, pair_columns, place_pair};
 
 pub(super) struct Pairs;
 
@@ -44,8 +44,8 @@ impl View for Pairs {
             .collect();
         let family = Family::of(found.iter().flatten());
         let mut draft = Draft::of_term(study, PAGE.name);
-        let title = Rich::from("Pairs of groups on each outcome, ")
-            .then(comparison.factor_label.clone());
+        let title =
+            Rich::from("Pairs of groups on each outcome, ").then(comparison.factor_label.clone());
         let mut table = Table::new(title)
             .column(Column::row_head("Outcome"))
             .columns(pair_columns("*M* difference", policy));
@@ -90,12 +90,7 @@ impl View for Pairs {
 }
 
 /// How large the differences on each outcome are on average, whatever their direction.
-fn averages(
-    draft: &mut Draft,
-    study: &Study,
-    found: &[Option<Found>],
-    request: &Request,
-) -> Table {
+fn averages(draft: &mut Draft, study: &Study, found: &[Option<Found>], request: &Request) -> Table {
     let symbol = effect_symbol(request.policy.effect);
     let head = Rich::from("mean |").then(symbol.clone()).then(Rich::from("|"));
     let mut table = Table::new("Average size of the differences on each outcome")

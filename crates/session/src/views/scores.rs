@@ -47,8 +47,7 @@ impl View for Scores {
 fn tests(draft: &mut Draft, study: &Study, policy: &Policy) -> Answerable<Table> {
     let sample = &study.comparison.sample;
     let scores = &study.discriminant()?.scores;
-    let title =
-        Rich::from("Discriminant scores by ").then(study.comparison.factor_label.clone());
+    let title = Rich::from("Discriminant scores by ").then(study.comparison.factor_label.clone());
     let alpha = threshold(policy.scores_alpha);
     let mut table = Table::new(title)
         .column(Column::row_head("Function"))

@@ -46,11 +46,14 @@ pub(super) fn measured(number: f64, outcome: &Outcome) -> Value {
 
 /// `N = 170 in 3 groups of roster.`
 pub(super) fn size_note(comparison: &Comparison) -> Rich {
-    Rich::fill("*N* = {n} in {k} groups of {factor}.", &[
-        ("n", Rich::plain(comparison.sample.units().to_string())),
-        ("k", Rich::plain(comparison.levels.len().to_string())),
-        ("factor", comparison.factor_label.clone()),
-    ])
+    Rich::fill(
+        "*N* = {n} in {k} groups of {factor}.",
+        &[
+            ("n", Rich::plain(comparison.sample.units().to_string())),
+            ("k", Rich::plain(comparison.levels.len().to_string())),
+            ("factor", comparison.factor_label.clone()),
+        ],
+    )
 }
 
 /// Names in a sentence: `a`, `a and b`, `a, b and c`.
