@@ -17,6 +17,7 @@ mod log;
 mod message;
 mod notebook;
 mod outputs;
+mod parent;
 mod position;
 mod requests;
 mod serve;

@@ -6,10 +6,13 @@ use super::iopub::Publisher;
 use super::mailbox::Inbox;
 use super::{receive_request, send};
 use crate::error::KernelError;
+use crate::log::log;
 use crate::message::Wire;
+use crate::parent::{self, Parent};
 use crate::requests::{self, Control, Exchange};
 
-/// Serves until a client asks for the end or another thread fails.
+/// Serves until a client asks for the end, the program that started the kernel has ended, or
+/// another thread fails.
 ///
 /// # Errors
 /// When this socket fails, or the one whose failure another thread posts.
@@ -20,8 +23,13 @@ pub(crate) fn run(
     iopub: &Publisher,
     control: &mut Control,
 ) -> Result<(), KernelError> {
+    let parent = Parent::of_this_process();
     while !control.ending {
-        failures.wait_with(socket)?;
+        failures.wait_at_most(parent::INTERVAL, socket)?;
+        if parent.has_ended() {
+            log("the program that started this kernel has ended, and so does the kernel");
+            return Ok(());
+        }
         if let Some(failure) = failures.letters()?.into_iter().next() {
             return Err(failure);
         }

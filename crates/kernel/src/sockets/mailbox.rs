@@ -2,6 +2,7 @@
 //! each letter rings a bell: a socket inside the process, which the thread waits for as well.
 
 use std::sync::mpsc::{Receiver, Sender, channel};
+use std::time::Duration;
 
 use zmq::{Context, Error, Socket, SocketType};
 
@@ -55,7 +56,12 @@ impl<T> Mailbox<T> {
 impl<T> Inbox<T> {
     /// Waits for a letter or for something to read at `socket`.
     pub(crate) fn wait_with(&self, socket: &Socket) -> Result<(), Error> {
-        wait(&self.bell, socket)
+        wait(&self.bell, socket, None)
+    }
+
+    /// The same, but no longer than for some time.
+    pub(crate) fn wait_at_most(&self, time: Duration, socket: &Socket) -> Result<(), Error> {
+        wait(&self.bell, socket, Some(time))
     }
 
     /// The letters that have arrived. The bell is silenced first, so that one which comes

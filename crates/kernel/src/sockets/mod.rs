@@ -7,6 +7,8 @@ pub(crate) mod iopub;
 pub(crate) mod mailbox;
 pub(crate) mod shell;
 
+use std::time::Duration;
+
 use zmq::{Context, Error, POLLIN, Socket, SocketType};
 
 use crate::connection::{Channel, Connection};
@@ -61,10 +63,13 @@ fn uninterrupted<T>(mut call: impl FnMut() -> Result<T, Error>) -> Result<T, Err
     }
 }
 
-/// Waits until one of two sockets has something to read.
-fn wait(one: &Socket, other: &Socket) -> Result<(), Error> {
+/// Waits until one of two sockets has something to read, or until the time is over.
+fn wait(one: &Socket, other: &Socket, longest: Option<Duration>) -> Result<(), Error> {
     let mut items = [one.as_poll_item(POLLIN), other.as_poll_item(POLLIN)];
-    uninterrupted(|| zmq::poll(&mut items, -1)).map(|_| ())
+    let forever = -1;
+    let milliseconds =
+        longest.map_or(forever, |time| i64::try_from(time.as_millis()).unwrap_or(i64::MAX));
+    uninterrupted(|| zmq::poll(&mut items, milliseconds)).map(|_| ())
 }
 
 /// The next message of a socket, or nothing where none waits.
