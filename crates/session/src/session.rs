@@ -108,7 +108,9 @@ impl Session {
         path: &str,
         options: &ReadOptions,
     ) -> Result<(Arc<Frame>, Fingerprint), ReadError> {
-        let full = self.root.join(path);
+        // A file beside the document is told of as it was written, without a leading `./`.
+        let here = self.root == Path::new(".");
+        let full = if here { PathBuf::from(path) } else { self.root.join(path) };
         let Some(content) = self.content(&full) else {
             // The reader finds the words for a file that can't be read.
             let frame = read_file(&full, options)?;
