@@ -324,6 +324,18 @@ impl Expression {
         }
     }
 
+    /// The name that it is, where it is a name and nothing else.
+    #[must_use]
+    pub fn name(&self) -> Option<&str> {
+        if let ExpressionKind::Name(name) = &self.kind { Some(name) } else { None }
+    }
+
+    /// The text in quotation marks that it is, where it is nothing else.
+    #[must_use]
+    pub fn text(&self) -> Option<&str> {
+        if let ExpressionKind::Text(text) = &self.kind { Some(text) } else { None }
+    }
+
     /// It and every expression in it, from the outside in and from left to right.
     #[must_use]
     pub fn parts(&self) -> Vec<&Self> {

@@ -3,7 +3,7 @@
 use std::cmp::Ordering;
 use std::sync::Arc;
 
-use tussock_language::ast::{Expression, ExpressionKind, Operator};
+use tussock_language::ast::{Expression, Operator};
 use tussock_language::diagnostic::Diagnostic;
 use tussock_language::names::listed;
 
@@ -23,10 +23,10 @@ impl Comparing<'_> {
         right: &Expression,
     ) -> Answerable<Vector> {
         if let Some(level) = self.level(right) {
-            return self.with_level(left, operator, &level, right);
+            return self.with_level(left, operator, level, right);
         }
         if let Some(level) = self.level(left) {
-            return self.with_level(right, mirrored(operator), &level, left);
+            return self.with_level(right, mirrored(operator), level, left);
         }
         let (first, second) = (self.0.evaluate(left)?, self.0.evaluate(right)?);
         match (&first, &second) {
@@ -58,17 +58,9 @@ impl Comparing<'_> {
     ) -> Answerable<Vector> {
         let mut found: Vec<Option<bool>> = vec![Some(false); self.0.columns.rows()];
         for item in list {
-            let equal = match &item.kind {
-                ExpressionKind::Name(name) | ExpressionKind::Text(name) => {
-                    self.with_level(value, Operator::Equal, name, item)?
-                }
-                ExpressionKind::Number(_)
-                | ExpressionKind::Negate(_)
-                | ExpressionKind::Not(_)
-                | ExpressionKind::Binary { .. }
-                | ExpressionKind::If { .. }
-                | ExpressionKind::In { .. }
-                | ExpressionKind::Call { .. } => self.compare(value, Operator::Equal, item)?,
+            let equal = match item.name().or(item.text()) {
+                Some(level) => self.with_level(value, Operator::Equal, level, item)?,
+                None => self.compare(value, Operator::Equal, item)?,
             };
             let Vector::Truth(equal) = equal else { continue };
             for (one, other) in found.iter_mut().zip(equal.iter()) {
@@ -79,19 +71,8 @@ impl Comparing<'_> {
     }
 
     /// The level that an operand means, where it is no column.
-    fn level(&self, operand: &Expression) -> Option<String> {
-        match &operand.kind {
-            ExpressionKind::Text(text) => Some(text.clone()),
-            ExpressionKind::Name(name) if !self.0.columns.has(name) => Some(name.clone()),
-            ExpressionKind::Name(_)
-            | ExpressionKind::Number(_)
-            | ExpressionKind::Negate(_)
-            | ExpressionKind::Not(_)
-            | ExpressionKind::Binary { .. }
-            | ExpressionKind::If { .. }
-            | ExpressionKind::In { .. }
-            | ExpressionKind::Call { .. } => None,
-        }
+    fn level<'e>(&self, operand: &'e Expression) -> Option<&'e str> {
+        operand.text().or(operand.name().filter(|name| !self.0.columns.has(name)))
     }
 
     fn with_level(
@@ -106,8 +87,7 @@ impl Comparing<'_> {
             return Err(self.unordered(column));
         }
         // A bare name that is no level is a slip; a text in quotation marks may occur or not.
-        let is_bare = matches!(written.kind, ExpressionKind::Name(_));
-        if is_bare && !texts.iter().flatten().any(|text| text == level) {
+        if written.name().is_some() && !texts.iter().flatten().any(|text| text == level) {
             return Err(self.unknown_level(column, level, written, &texts));
         }
         Ok(Vector::truth(
@@ -117,16 +97,9 @@ impl Comparing<'_> {
 
     fn texts(&self, column: &Expression) -> Answerable<Arc<Vec<Option<String>>>> {
         let location = self.0.location(column.span);
-        let vector = match &column.kind {
-            ExpressionKind::Name(name) => self.0.columns.texts(name, location)?,
-            ExpressionKind::Text(_)
-            | ExpressionKind::Number(_)
-            | ExpressionKind::Negate(_)
-            | ExpressionKind::Not(_)
-            | ExpressionKind::Binary { .. }
-            | ExpressionKind::If { .. }
-            | ExpressionKind::In { .. }
-            | ExpressionKind::Call { .. } => self.0.evaluate(column)?,
+        let vector = match column.name() {
+            Some(name) => self.0.columns.texts(name, location)?,
+            None => self.0.evaluate(column)?,
         };
         match vector {
             Vector::Text(texts) => Ok(texts),
@@ -143,17 +116,7 @@ impl Comparing<'_> {
         written: &Expression,
         texts: &[Option<String>],
     ) -> Box<Diagnostic> {
-        let name = match &column.kind {
-            ExpressionKind::Name(name) => format!("`{name}`"),
-            ExpressionKind::Text(_)
-            | ExpressionKind::Number(_)
-            | ExpressionKind::Negate(_)
-            | ExpressionKind::Not(_)
-            | ExpressionKind::Binary { .. }
-            | ExpressionKind::If { .. }
-            | ExpressionKind::In { .. }
-            | ExpressionKind::Call { .. } => "the left side".to_owned(),
-        };
+        let name = column.name().map_or("the left side".to_owned(), |name| format!("`{name}`"));
         let mut levels: Vec<String> = texts.iter().flatten().cloned().collect();
         levels.sort();
         levels.dedup();
