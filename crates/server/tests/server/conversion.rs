@@ -1,8 +1,9 @@
 //! Positions and bytes, by table.
 
-use tower_lsp::lsp_types::{Position, PositionEncodingKind, Range};
+use proptest::prelude::*;
+use tower_lsp::lsp_types::{Position, PositionEncodingKind, Range, TextDocumentContentChangeEvent};
 use tussock_language::span::Span;
-use tussock_server::{Encoding, Lines};
+use tussock_server::{Encoding, Lines, apply};
 
 /// Line 0: `a🚢é` and a combining accent `e\u{301}`, ended by CRLF. Line 1: empty, ended by LF.
 /// Line 2: `日本`, ended by a lone CR. Line 3: `z`, with no end.
@@ -116,4 +117,41 @@ fn the_first_known_encoding_of_the_client_is_taken() {
     for (offered, taken) in cases {
         assert_eq!(Encoding::negotiate(offered.as_deref()), taken, "{offered:?}");
     }
+}
+
+proptest! {
+    /// What a client writes in its own units is what happens to the bytes.
+    #[test]
+    fn edits_by_position_do_what_edits_by_byte_do(
+        text in "[a-c🚢é\r\n]{0,30}",
+        edits in prop::collection::vec((0..100_usize, 0..100_usize, "[x🚢\r\n]{0,3}"), 1..6),
+        encoding in prop::sample::select(ENCODINGS.to_vec()),
+    ) {
+        let mut expected = text.clone();
+        let mut changes = Vec::new();
+        for (one, other, insertion) in edits {
+            let places = places(&expected);
+            let one = places[one % places.len()];
+            let other = places[other % places.len()];
+            let span = Span::new(one.min(other), one.max(other));
+            changes.push(TextDocumentContentChangeEvent {
+                range: Some(Lines::of(&expected).range(&expected, span, encoding)),
+                range_length: None,
+                text: insertion.clone(),
+            });
+            expected.replace_range(span.range(), &insertion);
+        }
+        let mut edited = text;
+        apply(&mut edited, changes, encoding);
+        prop_assert_eq!(edited, expected);
+    }
+}
+
+/// The bytes at which a cursor can stand: between characters, not within a line break.
+fn places(text: &str) -> Vec<usize> {
+    let within_break = |at: usize| {
+        text.get(..at).is_some_and(|head| head.ends_with('\r'))
+            && text.get(at..).is_some_and(|tail| tail.starts_with('\n'))
+    };
+    (0..=text.len()).filter(|&at| text.is_char_boundary(at) && !within_break(at)).collect()
 }
