@@ -4,7 +4,7 @@ use std::panic::{AssertUnwindSafe, catch_unwind};
 
 use tussock_language::ast::{Pin, ProsePart, Show, Write};
 use tussock_language::diagnostic::{Diagnostic, Severity};
-use tussock_language::model::{QuestionKind, TableBase};
+use tussock_language::model::{QuestionKind, TableBase, TableDefinition};
 use tussock_language::names::{dotted, quoted};
 use tussock_language::rules::diagnose;
 use tussock_language::span::{Location, SourceId};
@@ -14,7 +14,9 @@ use crate::answer::{Answer, Answers, Output};
 use crate::cancel::Cancel;
 use crate::context::{Context, view};
 use crate::evaluate::Columns;
+use crate::factor::levels;
 use crate::knowledge::Knowledge;
+use crate::relation::Relation;
 use crate::trouble::{Answerable, trouble};
 use crate::values::Found;
 use crate::views::Request;
@@ -133,6 +135,7 @@ fn definitions(context: &Context<'_>, here: &dyn Fn(Location) -> bool) -> Vec<An
             let word = guarded(location, || table_word(context, name, location));
             list.push(word_or_problem(location, word));
         }
+        list.extend(refinements(context, name, definition, here));
     }
     for (name, statement) in &context.model.comparisons {
         if here(statement.location) {
@@ -140,6 +143,37 @@ fn definitions(context: &Context<'_>, here: &dyn Fn(Location) -> bool) -> Vec<An
                 guarded(statement.location, || comparison_word(context, name, statement.location));
             list.push(word_or_problem(statement.location, word));
         }
+    }
+    list
+}
+
+/// What is wrong with what is stated of a table beside its base: a column that can't be derived, an
+/// order that does not fit the levels. It is told where it is stated, asked for or not.
+fn refinements(
+    context: &Context<'_>,
+    name: &str,
+    definition: &TableDefinition,
+    here: &dyn Fn(Location) -> bool,
+) -> Vec<Answer> {
+    let mut list = Vec::new();
+    let mut try_at = |location: Location, attempt: &dyn Fn(&Relation) -> Answerable<()>| {
+        if !here(location) {
+            return;
+        }
+        // A table that can't be had is told at its base.
+        let Ok(table) = context.relation(name, location) else { return };
+        if let Err(problem) = guarded(location, || attempt(&table)) {
+            list.push(Answer { location, output: Output::Problem(*problem) });
+        }
+    };
+    for derive in &definition.derived {
+        let column = &derive.value.column.column.value;
+        try_at(derive.location, &|table| table.column(column, derive.location).map(drop));
+    }
+    for stated in &definition.levels {
+        let column = &stated.value.column.column;
+        let location = Location { source: stated.location.source, span: column.span };
+        try_at(stated.location, &|table| levels(table, &column.value, location).map(drop));
     }
     list
 }
@@ -154,10 +188,6 @@ fn word_or_problem(location: Location, word: Answerable<Rich>) -> Answer {
 
 fn table_word(context: &Context<'_>, name: &str, location: Location) -> Answerable<Rich> {
     let table = context.relation(name, location)?;
-    // A derived column that can't be computed is told where it is defined, asked for or not.
-    for derive in &table.derived {
-        table.column(&derive.value.column.column.value, derive.location)?;
-    }
     let rows = table.rows();
     let admitted = context.model.tables.get(name).map(|definition| &definition.base.value);
     let text = match admitted {
@@ -218,8 +248,15 @@ fn show(context: &Context<'_>, show: &Show, location: Location) -> Answerable<Ve
         policy: context.policy.with(&show.settings),
         coefficients: show.coefficients.as_ref().map(|kind| kind.value.clone()),
     };
-    let shown = context.shown(&comparison.value, view, &request, at(comparison.span))?;
-    Ok(shown.tables.iter().cloned().map(Output::Table).collect())
+    let place = at(comparison.span);
+    let shown = context.shown(&comparison.value, view, &request, place)?;
+    let tables = if request.policy == context.policy {
+        shown.tables.clone()
+    } else {
+        let live = context.shown(&comparison.value, view, &context.request(), place)?;
+        shown.tables_beside(&live)
+    };
+    Ok(tables.into_iter().map(Output::Table).collect())
 }
 
 fn paragraph(context: &Context<'_>, write: &Write, location: Location) -> Answerable<Vec<Output>> {

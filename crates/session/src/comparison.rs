@@ -272,16 +272,20 @@ impl Flow {
         for relation in ancestors(table) {
             let selected = matches!(&relation.base, Base::Part { parent, .. }
                 if parent.name == relation.name);
-            let key = if selected { "selected" } else { &relation.name };
+            let keys = if selected {
+                vec!["selected".to_owned()]
+            } else {
+                vec!["admitted".to_owned(), relation.name.clone()]
+            };
             steps.push(match &relation.base {
                 Base::File(frame) => Step {
-                    key: "read".to_owned(),
+                    keys: vec!["read".to_owned()],
                     label: Rich::plain(format!("Read: {}", relation.name)),
                     remaining: Count { total: frame.rows(), groups: None },
                     left_out: None,
                 },
                 Base::Part { rows, admission, .. } => Step {
-                    key: key.to_owned(),
+                    keys,
                     label: Rich::plain(admission.to_string()),
                     remaining: Count { total: rows.len(), groups: None },
                     left_out: Some(admission.excluded + admission.undecided),
@@ -311,7 +315,7 @@ impl Flow {
         }
         if grouped.len() < all {
             self.steps.push(Step {
-                key: "grouped".to_owned(),
+                keys: vec!["grouped".to_owned()],
                 label: Rich::plain(format!("With a value of {factor}")),
                 remaining: Count::of(&grouped, groups.levels.len()),
                 left_out: Some(all - grouped.len()),
@@ -322,7 +326,7 @@ impl Flow {
     /// Adds the last step: the rows that are complete.
     fn analysed(&mut self, before: &[(usize, usize)], kept: &[(usize, usize)], groups: usize) {
         self.steps.push(Step {
-            key: "analysed".to_owned(),
+            keys: vec!["analysed".to_owned()],
             label: Rich::from("Compared: a value on every outcome"),
             remaining: Count::of(kept, groups),
             left_out: Some(before.len() - kept.len()),

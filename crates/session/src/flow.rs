@@ -14,8 +14,9 @@ pub(crate) struct Flow {
 /// One step.
 #[derive(Clone, Debug, PartialEq)]
 pub(crate) struct Step {
-    /// A plain word for paths: `read`, `admitted`, `selected`, `grouped`, `analysed`.
-    pub(crate) key: String,
+    /// What it is called in paths: `read`, `admitted` and the name of the table that it made,
+    /// `selected`, `grouped`, `analysed`.
+    pub(crate) keys: Vec<String>,
     /// What the step is.
     pub(crate) label: Rich,
     /// How many rows remain.

@@ -43,12 +43,13 @@ impl View for Flow {
                 Column::value(Rich::plain(level)).under(comparison.factor_label.clone())
             }));
         for step in &comparison.flow.steps {
+            let keys: Vec<&str> = step.keys.iter().map(String::as_str).collect();
             let row = Row::headed(step.label.clone());
             let row = match step.left_out {
-                Some(rows) => row.number(draft.place(Value::count(rows), &[&step.key, "left_out"])),
+                Some(rows) => row.number(draft.place(Value::count(rows), &with(&keys, "left_out"))),
                 None => row.empty(),
             };
-            table = table.row(count_cells(&draft, row, &step.remaining, &[&step.key], study));
+            table = table.row(count_cells(&draft, row, &step.remaining, &keys, study));
         }
         let missing = comparison.flow.missing.iter().filter(|missing| missing.count.total > 0);
         for (index, missing) in missing.enumerate() {

@@ -15,9 +15,11 @@ mod pairs;
 mod scores;
 mod wording;
 
+use std::collections::BTreeMap;
+
 use tussock_language::facts::Page;
 use tussock_report::citation::Citation;
-use tussock_report::table::{Placed, Table};
+use tussock_report::table::{Cell, Placed, Table};
 
 use crate::policy::Policy;
 use crate::study::Study;
@@ -67,6 +69,34 @@ impl Shown {
     pub(crate) fn placed(&self) -> impl Iterator<Item = &Placed> {
         let printed = self.tables.iter().flat_map(Table::placed);
         printed.chain(&self.values).filter(|placed| !placed.path.is_empty())
+    }
+
+    /// The tables; a number that differs from the one in `live` has no path there. So a path stands
+    /// for one number in the whole document, whatever settings a statement has of its own.
+    pub(crate) fn tables_beside(&self, live: &Self) -> Vec<Table> {
+        let known: BTreeMap<&[String], f64> = live
+            .placed()
+            .map(|placed| (placed.path.as_slice(), placed.value.number))
+            .collect();
+        let mut tables = self.tables.clone();
+        let rows = tables.iter_mut().flat_map(|table| &mut table.rows);
+        for cell in rows.flat_map(|row| &mut row.cells) {
+            let placed = match cell {
+                Cell::Empty | Cell::Text(_) | Cell::Undefined => [None, None],
+                Cell::Number(number) => [Some(number), None],
+                Cell::Interval { lower, upper } => [Some(lower), Some(upper)],
+            };
+            for placed in placed.into_iter().flatten() {
+                let number = placed.value.number;
+                let is_live = known
+                    .get(placed.path.as_slice())
+                    .is_some_and(|live| live.total_cmp(&number).is_eq());
+                if !is_live {
+                    placed.path.clear();
+                }
+            }
+        }
+        tables
     }
 }
 
