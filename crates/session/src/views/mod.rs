@@ -74,10 +74,8 @@ impl Shown {
     /// The tables; a number that differs from the one in `live` has no path there. So a path stands
     /// for one number in the whole document, whatever settings a statement has of its own.
     pub(crate) fn tables_beside(&self, live: &Self) -> Vec<Table> {
-        let known: BTreeMap<&[String], f64> = live
-            .placed()
-            .map(|placed| (placed.path.as_slice(), placed.value.number))
-            .collect();
+        let known: BTreeMap<&[String], f64> =
+            live.placed().map(|placed| (placed.path.as_slice(), placed.value.number)).collect();
         let mut tables = self.tables.clone();
         let rows = tables.iter_mut().flat_map(|table| &mut table.rows);
         for cell in rows.flat_map(|row| &mut row.cells) {
