@@ -71,7 +71,7 @@ def expected_paths(groups):
     sizes = ("value", "eta2", "eta2_lower", "eta2_upper")
     for criterion in ("wilks", "pillai", "hotelling"):
         paths += [("omnibus", FACTOR, criterion, key) for key in (*test, *sizes)]
-    bound = ("F_bound", "df1", "df2", "p_bound", "ln_p_bound", "value", "eta2", "theta")
+    bound = ("F", "df1", "df2", "p_bound", "ln_p_bound", "value", "eta2", "theta")
     roy = (*test, *sizes, "theta") if groups == 2 else bound
     paths += [("omnibus", FACTOR, "roy", key) for key in roy]
     paths.append(("omnibus", FACTOR, "wilks", "ln_value"))

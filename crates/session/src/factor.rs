@@ -54,7 +54,7 @@ pub(crate) fn factor(table: &Relation, column: &str, location: Location) -> Answ
         .filter(|level| texts.iter().flatten().any(|text| text == level))
         .collect();
     if levels.len() < 2 {
-        return Err(too_few(column, &levels, location));
+        return Err(too_few(column, &levels, texts.len(), location));
     }
     let code = |text: &String| levels.iter().position(|level| level == text);
     let codes = texts.iter().map(|text| text.as_ref().and_then(code)).collect();
@@ -99,8 +99,9 @@ fn natural_order(table: &Relation, column: &str, location: Location) -> Answerab
     Ok(levels.into_iter().map(str::to_owned).collect())
 }
 
-fn too_few(column: &str, levels: &[String], location: Location) -> Box<Diagnostic> {
+fn too_few(column: &str, levels: &[String], rows: usize, location: Location) -> Box<Diagnostic> {
     let message = match levels {
+        [] if rows == 0 => "there are no rows to compare".to_owned(),
         [] => format!("`{column}` is missing in every row, so there are no groups to compare"),
         _ => format!("`{column}` has the same value in every row, so there is nothing to compare"),
     };

@@ -106,6 +106,18 @@ fn a_restarted_notebook_says_which_cell_to_run() {
 }
 
 #[test]
+fn a_cell_that_states_an_order_is_told_where_the_order_does_not_fit() {
+    let folder = Folder::with(&[("t.csv", PLAIN)]);
+    let mut notebook = Notebook::new(&folder.path);
+    notebook.run(None, "read \"t.csv\" as t", &Cancel::new());
+    let reply = notebook.run(None, "levels t.g a, b", &Cancel::new());
+    let rules: Vec<&str> = reply.answers.problems().map(|problem| problem.rule).collect();
+    assert_eq!(rules, ["unlisted-level"]);
+    let reply = notebook.run(None, "derive t.z = zscore(g)", &Cancel::new());
+    assert!(reply.answers.failed());
+}
+
+#[test]
 fn rows_left_out_are_counted_with_their_reason() {
     let text = PLAIN.replace("a,7.8,22.9", "a,,22.9").replace("b,8.0,17.1", "b,8.0,");
     let folder = Folder::with(&[("t.csv", &text)]);

@@ -55,7 +55,7 @@ static TERMS: &[Term] = &[
     term!(Other, "wilks", []),
     term!(Other, "pillai", []),
     term!(Other, "hotelling", []),
-    term!(Other, "roy", ["theta", "F_bound", "p_bound"]),
+    term!(Other, "roy", ["theta", "p_bound"]),
     term!(Other, "eta2", []),
     term!(Other, "omega2", []),
     term!(Other, "cohens-d", ["d"]),

@@ -75,7 +75,7 @@ fn every_key_of_a_live_value_has_a_page() {
         ),
         (
             "omnibus",
-            "wilks pillai hotelling roy theta F df1 df2 p ln_p eta2 eta2_lower eta2_upper F_bound p_bound",
+            "wilks pillai hotelling roy theta F df1 df2 p ln_p eta2 eta2_lower eta2_upper p_bound",
         ),
         ("functions", "eigenvalue share canonical wilks F df1 df2 p"),
         ("coefficients", "raw standardized structure share"),

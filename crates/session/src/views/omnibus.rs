@@ -124,7 +124,7 @@ impl Entry<'_> {
         let row = if self.is_bound() {
             let p = draft.place_p(test.p, &[self.key], "p_bound");
             draft.keep(p.value, &[self.key, "p_bound"]);
-            row.number(draft.place(Value::statistic(test.f), &[self.key, "F_bound"]))
+            row.number(draft.place(Value::statistic(test.f), &[self.key, "F"]))
                 .number(draft.place(Value::df(test.df1), &[self.key, "df1"]))
                 .number(draft.place(Value::df(test.df2), &[self.key, "df2"]))
                 .undefined()
