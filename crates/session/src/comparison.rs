@@ -259,7 +259,7 @@ fn decimals(column: &[f64]) -> u8 {
         let unit = 10f64.powi(decimals);
         column.iter().filter(|x| !x.is_nan()).all(|x| {
             let scaled = x * unit;
-            (scaled - scaled.round()).abs() <= 1e-6 * scaled.abs().max(1.0).min(1e3)
+            (scaled - scaled.round()).abs() <= 1e-6 * scaled.abs().clamp(1.0, 1e3)
         })
     };
     (0u8..4).find(|&decimals| shows(i32::from(decimals))).unwrap_or(4)

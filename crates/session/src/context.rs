@@ -133,13 +133,14 @@ impl<'a> Context<'a> {
         let text = self.written(statement.location);
         let place = place_key(statement);
         let parts = [relation.fingerprint.bytes(), text.as_bytes(), place.as_bytes()];
-        self.session.studies.get_or_make(Fingerprint::of(parts), || {
+        let key = Fingerprint::of(parts);
+        self.session.studies.get_or_make(key, || {
             let condition = compare
                 .condition
                 .as_ref()
                 .map_or("", |condition| self.written(Location { source, span: condition.span }));
             let comparison = Comparison::gather(statement, &relation, condition)?;
-            Ok(Arc::new(Study::new(comparison)))
+            Ok(Arc::new(Study::new(comparison, key)))
         })
     }
 
@@ -152,7 +153,11 @@ impl<'a> Context<'a> {
         asked: Location,
     ) -> Answerable<Arc<Shown>> {
         let study = self.study(comparison, asked)?;
-        view.show(&study, request).map(Arc::new)
+        let asked_for = format!("{request:?}");
+        let parts = [study.fingerprint.bytes(), view.page().name.as_bytes(), asked_for.as_bytes()];
+        self.session
+            .shown
+            .get_or_make(Fingerprint::of(parts), || view.show(&study, request).map(Arc::new))
     }
 
     /// The request of a statement without settings of its own.

@@ -24,8 +24,9 @@ use crate::fingerprint::Fingerprint;
 use crate::knowledge::Knowledge;
 use crate::relation::Relation;
 use crate::study::Study;
+use crate::views::Shown;
 
-/// How many files, tables and studies are kept at most.
+/// How many files, tables, studies and views are kept at most, of each.
 const KEPT: usize = 64;
 
 /// Answers documents that live in one folder. Shared by reference among threads; everything that it
@@ -37,6 +38,7 @@ pub struct Session {
     frames: Cache<Arc<Frame>>,
     pub(crate) relations: Cache<Arc<Relation>>,
     pub(crate) studies: Cache<Arc<Study>>,
+    pub(crate) shown: Cache<Arc<Shown>>,
 }
 
 /// A file's content as it was last hashed; it is hashed again when its size or time has changed.
@@ -56,6 +58,7 @@ impl Session {
             frames: Cache::new(KEPT),
             relations: Cache::new(KEPT),
             studies: Cache::new(KEPT),
+            shown: Cache::new(KEPT),
         }
     }
 

@@ -10,12 +10,15 @@ use tussock_analysis::hypothesis::{Hypothesis, one_way};
 use tussock_language::diagnostic::Diagnostic;
 
 use crate::comparison::Comparison;
+use crate::fingerprint::Fingerprint;
 use crate::refusal::{Names, refusal};
 use crate::trouble::Answerable;
 
 /// A comparison under study.
 #[derive(Debug)]
 pub(crate) struct Study {
+    /// A hash of everything that it rests on.
+    pub(crate) fingerprint: Fingerprint,
     /// The data.
     pub(crate) comparison: Comparison,
     hypothesis: OnceLock<Result<Hypothesis, AnalysisError>>,
@@ -33,8 +36,9 @@ pub(crate) struct Discriminant {
 
 impl Study {
     /// A study of a comparison, nothing done yet.
-    pub(crate) fn new(comparison: Comparison) -> Self {
-        Self { comparison, hypothesis: OnceLock::new(), discriminant: OnceLock::new() }
+    pub(crate) fn new(comparison: Comparison, fingerprint: Fingerprint) -> Self {
+        let (hypothesis, discriminant) = (OnceLock::new(), OnceLock::new());
+        Self { fingerprint, comparison, hypothesis, discriminant }
     }
 
     /// The hypothesis that the groups do not differ.

@@ -121,10 +121,9 @@ pub(crate) fn keys_after(shown: &Shown, prefix: &[String]) -> Vec<String> {
     let paths = shown.placed().map(|placed| placed.path.as_slice());
     let cited = shown.citations.iter().map(|cited| cited.path.as_slice());
     for path in paths.chain(cited) {
-        if let (true, Some(key)) = (path.starts_with(prefix), path.get(prefix.len())) {
-            if !keys.contains(key) {
-                keys.push(key.clone());
-            }
+        let next = path.get(prefix.len()).filter(|_| path.starts_with(prefix));
+        if let Some(key) = next.filter(|key| !keys.contains(key)) {
+            keys.push(key.clone());
         }
     }
     keys
