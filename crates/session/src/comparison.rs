@@ -218,8 +218,9 @@ fn refuse_empty_groups(
     factor: &str,
     location: Location,
 ) -> Answerable<()> {
-    for (code, level) in groups.levels.iter().enumerate() {
-        if !kept.iter().any(|(_, group)| *group == code) {
+    let sizes = Count::of(kept, groups.levels.len()).by_group();
+    for (level, size) in groups.levels.iter().zip(sizes) {
+        if size == 0 {
             let message = format!("no row of `{level}` has a value on every outcome");
             let help = format!(
                 "leave the group out with `where {} != {}`, or compare on other outcomes",
@@ -336,8 +337,13 @@ impl Flow {
 
 impl Count {
     fn of(rows: &[(usize, usize)], groups: usize) -> Self {
-        let size = |group| rows.iter().filter(|(_, code)| *code == group).count();
-        Self { total: rows.len(), groups: Some((0..groups).map(size).collect()) }
+        let mut sizes = vec![0; groups];
+        for (_, code) in rows {
+            if let Some(size) = sizes.get_mut(*code) {
+                *size += 1;
+            }
+        }
+        Self { total: rows.len(), groups: Some(sizes) }
     }
 
     fn by_group(self) -> Vec<usize> {

@@ -1,5 +1,7 @@
 //! The groups of a comparison: a column's levels in their order, and each row's group.
 
+use std::collections::{BTreeMap, BTreeSet};
+
 use tussock_data::frame::order;
 use tussock_language::diagnostic::Diagnostic;
 use tussock_language::names::{listed, quoted};
@@ -29,8 +31,9 @@ impl Factor {
     /// How many of some texts are each level.
     pub(crate) fn count<'a>(&self, texts: impl Iterator<Item = Option<&'a str>>) -> Vec<usize> {
         let mut counts = vec![0; self.levels.len()];
+        let codes = codes(&self.levels);
         for text in texts.flatten() {
-            let code = self.levels.iter().position(|level| level == text);
+            let code = codes.get(text).copied();
             if let Some(count) = code.and_then(|code| counts.get_mut(code)) {
                 *count += 1;
             }
@@ -49,16 +52,21 @@ pub(crate) fn factor(table: &Relation, column: &str, location: Location) -> Answ
         return Ok(Factor { levels: Vec::new(), codes: Vec::new() });
     };
     let order = levels(table, column, location)?;
-    let levels: Vec<String> = order
-        .into_iter()
-        .filter(|level| texts.iter().flatten().any(|text| text == level))
-        .collect();
+    let present: BTreeSet<&str> = texts.iter().flatten().map(String::as_str).collect();
+    let levels: Vec<String> =
+        order.into_iter().filter(|level| present.contains(level.as_str())).collect();
     if levels.len() < 2 {
         return Err(too_few(column, &levels, texts.len(), location));
     }
-    let code = |text: &String| levels.iter().position(|level| level == text);
+    let known = codes(&levels);
+    let code = |text: &String| known.get(text.as_str()).copied();
     let codes = texts.iter().map(|text| text.as_ref().and_then(code)).collect();
     Ok(Factor { levels, codes })
+}
+
+/// The code of each level: a column taken for a factor by mistake may have one in every row.
+fn codes(levels: &[String]) -> BTreeMap<&str, usize> {
+    levels.iter().enumerate().map(|(code, level)| (level.as_str(), code)).collect()
 }
 
 /// The levels of a column in their order.

@@ -12,7 +12,7 @@ use tussock_report::table::Table;
 
 use crate::context::Context;
 use crate::evaluate::Columns;
-use crate::factor::levels;
+use crate::factor::{levels, present};
 use crate::functions;
 use crate::relation::Relation;
 use crate::rules;
@@ -108,10 +108,7 @@ impl Facts for Knowledge<'_> {
 
     fn levels(&self, table: &str, column: &str) -> Option<Vec<String>> {
         let relation = self.context().relation(table, Location::default()).ok()?;
-        // An order that is being written is not yet right; the levels that occur still are.
-        levels(&relation, column, Location::default())
-            .or_else(|_| crate::factor::present(&relation, column))
-            .ok()
+        ordered_levels(&relation, column)
     }
 
     fn keys(&self, path: &[String]) -> Vec<KeyFact> {
@@ -174,7 +171,7 @@ fn column(relation: &Relation, name: &str) -> ColumnFact {
             detail.push(format!("{low} to {high}"));
         }
         detail.push(missing(values.len() - present.len()));
-    } else if let Ok(levels) = crate::factor::present(relation, name) {
+    } else if let Some(levels) = ordered_levels(relation, name) {
         let shown: Vec<&str> = levels.iter().map(String::as_str).take(6).collect();
         let more = if levels.len() > shown.len() { ", ..." } else { "" };
         detail.push(format!("{}{more}", shown.join(", ")));
@@ -182,6 +179,13 @@ fn column(relation: &Relation, name: &str) -> ColumnFact {
     detail.retain(|part| !part.is_empty());
     let kind = if number { ColumnKind::Number } else { ColumnKind::Text };
     ColumnFact { name: name.to_owned(), kind, detail: detail.join("; ") }
+}
+
+/// The levels in their stated order; where that order does not fit, as while it is being written,
+/// those that occur.
+fn ordered_levels(relation: &Relation, column: &str) -> Option<Vec<String>> {
+    let stated = levels(relation, column, Location::default());
+    stated.or_else(|_| present(relation, column)).ok()
 }
 
 fn missing(count: usize) -> String {

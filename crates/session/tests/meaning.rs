@@ -128,8 +128,8 @@ show flow of m
 ";
     let value = |path: &str| folder.value(code, path);
     assert_eq!(value("m.flow.read.rows"), 15.0);
-    assert_eq!(value("m.flow.kept.rows"), 13.0);
-    assert_eq!(value("m.flow.kept.left_out"), 2.0);
+    assert_eq!(value("m.flow.admitted.kept.rows"), 13.0);
+    assert_eq!(value("m.flow.admitted.kept.left_out"), 2.0);
     assert_eq!(value("m.flow.analysed.rows"), 12.0);
     assert_eq!(value("m.flow.analysed.left_out"), 1.0);
     assert_eq!(value("m.flow.missing.y.rows"), 1.0);
