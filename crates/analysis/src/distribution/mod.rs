@@ -1,29 +1,24 @@
-//! Probability distributions, one file each. Every tail is returned with its logarithm.
+//! Probability distributions, one file each: tails on the log scale, limits of noncentrality.
+//!
+//! Every tail is a [`PValue`](crate::test::PValue) whose logarithm holds where the probability
+//! itself underflows. Of the two tails of a law the smaller is computed and the larger is its
+//! complement, so that both keep their digits and add up to 1. A result is NaN only where an
+//! argument is NaN, a number of degrees of freedom is not positive, or a level or a probability
+//! lies outside 0 to 1.
 
 pub mod central_f;
 pub mod chi_square;
 pub mod hedges;
 pub mod incomplete_beta;
 pub mod incomplete_gamma;
+mod large_parameters;
 pub mod noncentral_f;
 pub mod noncentral_t;
+mod normal;
+mod poisson_mixture;
+mod root;
+mod stirling;
 pub mod student_t;
+mod tails;
 
-use crate::test::PValue;
-
-/// Both tails of a distribution at one point.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Tails {
-    /// The probability of the point or less.
-    pub lower: PValue,
-    /// The probability of more than the point.
-    pub upper: PValue,
-}
-
-impl Tails {
-    /// Both tails from the lower and the upper probability.
-    pub(crate) fn from_probabilities(lower: f64, upper: f64) -> Self {
-        let value = |p: f64| PValue { p, ln_p: p.ln() };
-        Self { lower: value(lower), upper: value(upper) }
-    }
-}
+pub use tails::Tails;

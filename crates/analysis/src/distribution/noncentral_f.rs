@@ -1,6 +1,10 @@
 //! The noncentral F distribution.
+//!
+//! Each tail is a Poisson mixture of tails of beta laws, a sum of positive terms.
 
-use super::{Tails, incomplete_beta};
+use super::poisson_mixture::{Law, PoissonMixture, Side};
+use super::root::Bracket;
+use super::{Tails, central_f};
 use crate::test::{Interval, PValue};
 
 /// P(F ≤ f) with `df1` and `df2` degrees of freedom and noncentrality `lambda`.
@@ -13,53 +17,57 @@ pub fn survival(f: f64, df1: f64, df2: f64, lambda: f64) -> PValue {
     tails(f, df1, df2, lambda).upper
 }
 
-/// The limits of lambda of the equal-tailed interval at `level` for an observed `f`; 0 where the
-/// data agree with no positive lambda.
+/// Both tails of the noncentral F law at `f`; `df2` may be infinite.
+///
+/// Source: Johnson, Kotz & Balakrishnan 1995, Continuous Univariate Distributions 2, ch. 30.
+pub fn tails(f: f64, df1: f64, df2: f64, lambda: f64) -> Tails {
+    if lambda.is_nan() || lambda < 0.0 {
+        return Tails::UNDEFINED;
+    }
+    let central = central_f::tails(f, df1, df2);
+    if f.is_nan() || f <= 0.0 || f.is_infinite() || lambda == 0.0 || df1.is_infinite() {
+        return central;
+    }
+    if lambda.is_infinite() {
+        return Tails::ALL_ABOVE;
+    }
+    let law = if df2.is_infinite() {
+        Law::Gamma { a: 0.5 * df1, x: 0.5 * df1 * f }
+    } else {
+        Law::Beta(central_f::beta_point(f, df1, df2))
+    };
+    let side = if f * df1 < df1 + lambda { Side::Lower } else { Side::Upper };
+    PoissonMixture { law, mean: 0.5 * lambda, side }.tails()
+}
+
+/// The limits of lambda that go with an observed `f`: the equal-tailed interval at `level`.
+///
+/// At the lower limit the chance of a larger F is (1 − level)/2, at the upper limit the chance of a
+/// smaller one; a limit is 0 where no lambda makes that chance so small (Steiger 2004, Psych.
+/// Methods 9:164).
 pub fn limits(f: f64, df1: f64, df2: f64, level: f64) -> Interval {
-    let tail = (1.0 - level) / 2.0;
+    if f.is_nan() || df1.is_nan() || df2.is_nan() || !(0.0..=1.0).contains(&level) {
+        return Interval { lower: f64::NAN, upper: f64::NAN };
+    }
+    let ln_tail = (0.5 * (1.0 - level)).ln();
+    if f == f64::INFINITY {
+        return Interval { lower: f, upper: f };
+    }
     Interval {
-        lower: bisect(|lambda| survival(f, df1, df2, lambda).p > tail),
-        upper: bisect(|lambda| cumulative(f, df1, df2, lambda).p <= tail),
+        lower: limit(f, df1, df2, |lambda| ln_tail - survival(f, df1, df2, lambda).ln_p),
+        upper: limit(f, df1, df2, |lambda| cumulative(f, df1, df2, lambda).ln_p - ln_tail),
     }
 }
 
-/// Where `reached` turns true as lambda rises from 0.
-fn bisect(reached: impl Fn(f64) -> bool) -> f64 {
-    if reached(0.0) {
+/// Where a function of lambda that falls turns negative; 0 where it starts so.
+fn limit(f: f64, df1: f64, df2: f64, falling: impl Fn(f64) -> f64) -> f64 {
+    if falling(0.0) <= 0.0 {
         return 0.0;
     }
-    let (mut low, mut high) = (0.0, 1.0);
-    while !reached(high) && high < 1e12 {
-        low = high;
-        high *= 2.0;
-    }
-    for _ in 0..80 {
-        let middle = 0.5 * (low + high);
-        if reached(middle) { high = middle } else { low = middle }
-    }
-    0.5 * (low + high)
-}
-
-/// Both tails, as Poisson mixtures of beta tails.
-fn tails(f: f64, df1: f64, df2: f64, lambda: f64) -> Tails {
-    let ratio = df2 / df1;
-    let (x, y) = if f.is_infinite() { (1.0, 0.0) } else { (f / (f + ratio), ratio / (f + ratio)) };
-    let half = 0.5 * lambda;
-    let reach = 10.0 * half.sqrt() + 30.0;
-    let (mut lower, mut upper) = (0.0, 0.0);
-    let mut j = (half - reach).floor().max(0.0);
-    while j < half + reach {
-        let ln_weight = if half > 0.0 {
-            j * half.ln() - half - statrs::function::gamma::ln_gamma(j + 1.0)
-        } else if j > 0.0 {
-            f64::NEG_INFINITY
-        } else {
-            0.0
-        };
-        let beta = incomplete_beta::tails(0.5 * df1 + j, 0.5 * df2, x, y);
-        lower += ln_weight.exp() * beta.lower.p;
-        upper += ln_weight.exp() * beta.upper.p;
-        j += 1.0;
-    }
-    Tails::from_probabilities(lower, upper)
+    let centre = (df1 * (f - 1.0)).max(0.0);
+    // About the standard error of the estimate of lambda.
+    let spread = (2.0 * (df1 + 2.0 * centre) + 2.0 * (df1 + centre) * (df1 + centre) / df2).sqrt();
+    let (step, bound) =
+        if falling(centre) > 0.0 { (spread, f64::INFINITY) } else { (-spread, 0.0) };
+    Bracket::reaching(centre, step, bound, &falling).map_or(bound, |bracket| bracket.zero(&falling))
 }
