@@ -26,9 +26,9 @@ pub(super) fn exactness(exactness: Exactness) -> Rich {
     })
 }
 
-/// `A – B` for the difference of two levels.
+/// `A − B` for the difference of two levels, never broken at the sign.
 pub(super) fn pair(first: &str, second: &str) -> Rich {
-    Rich::plain(format!("{first} − {second}"))
+    Rich::plain(format!("{first}\u{a0}−\u{a0}{second}"))
 }
 
 /// An outcome's label with its unit.
