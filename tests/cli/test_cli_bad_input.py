@@ -154,6 +154,18 @@ error [single-group]: `g` has the same value in every row, so there is nothing t
 """,
     ),
     Case(
+        "an identifier taken for the factor is told as such, however many it has",
+        'read "crew.csv" as t\ncompare x, y across id in t as m\nshow omnibus of m\n',
+        """\
+error [single-row-groups]: every group has one row, so there is no variation within groups to compare with
+  a.tus:2:21
+  2 | compare x, y across id in t as m
+    |                     ^^
+  help: check that the factor is the right column: an identifier makes one group a row
+""",
+        {"crew.csv": "id,x,y\n" + "".join(f"u{i},{i % 7},{i % 11}\n" for i in range(30_000))},
+    ),
+    Case(
         "a condition that leaves no rows is told as such",
         'read "good.csv" as t\ncompare x, y across g in t where x > 100 as m\nshow omnibus of m\n',
         """\
@@ -438,6 +450,15 @@ def test_a_problem_also_stands_in_the_document_below_the_code(folder):
     assert "a.tus:3:6\ndid you mean `omnibus`?" in page
 
 
+def test_ten_thousand_groups_are_compared(folder):
+    rows = "".join(f"u{i // 3},{i % 7},{i % 11}\n" for i in range(30_000))
+    folder.write("crew.csv", "id,x,y\n" + rows)
+    folder.write("a.tus", 'read "crew.csv" as t\ncompare x, y across id in t as m\nshow omnibus of m\n')
+    ran = folder.tussock("run", "a.tus")
+    assert (ran.code, ran.err) == (0, "")
+    assert "N = 30000 in 10000 groups of id." in " ".join(ran.out.split())
+
+
 def test_a_group_of_one_is_compared_and_what_it_lacks_is_a_dash_with_a_note(folder):
     folder.write("one.csv", GOOD.split("c,")[0] + "c,9.0,20.0\n")
     folder.write(
@@ -452,6 +473,22 @@ def test_a_group_of_one_is_compared_and_what_it_lacks_is_a_dash_with_a_note(fold
     assert "No Box’s M: the group c has 1 row, and 3 are needed here." in text
     (row,) = [line for line in ran.out.splitlines() if line.split()[:3] == ["c", "1", "9.00"]]
     assert row.split()[3:] == ["—", "—", "—"]
+
+
+def test_a_function_that_separates_nothing_is_not_interpreted(folder):
+    """The means of the four groups lie on a line, so there is one function."""
+    rows = [
+        f"g{step},{x + step},{y + 2 * step}"
+        for step in range(4)
+        for x, y in ((-1, -2), (1, 2), (-1, 1), (1, -1))
+    ]
+    folder.write("line.csv", "\n".join(["g,x,y", *rows]) + "\n")
+    folder.write(
+        "a.tus", 'read "line.csv" as t\ncompare x, y across g in t as m\nshow coefficients of m\n'
+    )
+    text = " ".join(folder.tussock("run", "a.tus").out.split())
+    assert "Function 2 separates nothing (λ = 0), so its direction is arbitrary." in text
+    assert "On function 2" not in text
 
 
 def test_many_problems_are_told_in_reading_order(folder):

@@ -265,6 +265,12 @@ def test_equal_means_give_no_effect_exactly():
         assert found == [0, 1, 0, 0]
 
 
+def test_where_nothing_separates_the_groups_only_the_shares_do_not_exist():
+    values = Case("zero_effect").answers.values
+    absent = {path for path, value in values.items() if value is None}
+    assert absent == {"main.functions.g.1.share", "main.functions.g.2.share"}
+
+
 def test_means_on_a_line_leave_the_second_eigenvalue_zero_and_not_noise():
     case = Case("rank1_means")
     assert case.of_term("functions", 2, "eigenvalue") == 0

@@ -90,8 +90,13 @@ impl View for Coefficients {
             "The sign of a function is arbitrary; here its largest standardized coefficient is \
              positive.",
         );
-        for function in 0..count {
-            if let Some(note) = opposite_signs(study, found, function) {
+        for (function, root) in study.hypothesis()?.roots().iter().enumerate() {
+            if *root == 0.0 {
+                table = table.note(Rich::fill(
+                    "Function {function} separates nothing (λ = 0), so its direction is arbitrary.",
+                    &[("function", Rich::plain((function + 1).to_string()))],
+                ));
+            } else if let Some(note) = opposite_signs(study, found, function) {
                 table = table.note(note);
             }
         }
