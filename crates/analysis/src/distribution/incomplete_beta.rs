@@ -7,7 +7,7 @@ use std::f64::consts::PI;
 use super::stirling::{deviance, stirling_error};
 use super::{Tails, large_parameters};
 
-/// Both tails of the beta law with parameters `a` and `b` at `x`, with `y` = 1 − x.
+/// Both tails of the beta law with the finite parameters `a` and `b` at `x`, with `y` = 1 − x.
 ///
 /// Sources: the continued fraction and the expansion for large parameters of DiDonato & Morris
 /// 1992, ACM Trans. Math. Softw. 18:360; the density in the form of Loader 2000, Fast and Accurate
@@ -51,13 +51,11 @@ impl BetaPoint {
         }
     }
 
-    /// Whether the lower tail is the one to compute.
+    /// Whether the lower tail is the one to compute. The continued fractions of the two tails serve
+    /// on either side of x = (a + 1)/(a + b + 2).
     fn lies_low(self) -> bool {
-        if self.is_large() {
-            self.excess <= 0.0
-        } else {
-            self.x * (self.a + self.b + 2.0) < self.a + 1.0
-        }
+        let bound = if self.is_large() { 0.0 } else { 1.0 - 2.0 * self.x };
+        self.excess < bound
     }
 
     /// Whether the expansion for large parameters applies.
@@ -95,12 +93,30 @@ impl BetaPoint {
         }
     }
 
+    /// The lower tail over xᵃ yᵇ / B(a, b), without cancellation far out.
+    pub(super) fn lower_over_density(self) -> f64 {
+        if self.lies_low() && !self.is_large() {
+            self.continued_fraction().recip()
+        } else {
+            (self.tails().lower.ln_p - self.ln_density()).exp()
+        }
+    }
+
+    /// The upper tail over the same quantity.
+    pub(super) fn upper_over_density(self) -> f64 {
+        if self.lies_low() || self.is_large() {
+            (self.tails().upper.ln_p - self.ln_density()).exp()
+        } else {
+            self.reflected().continued_fraction().recip()
+        }
+    }
+
     /// xᵃ yᵇ / (B(a, b) I_x(a, b)), by the modified Lentz method.
     fn continued_fraction(self) -> f64 {
         let Self { a, b, x, excess, .. } = self;
         let denominator = |m: f64| {
             let middle = if m > 0.0 { m * (b - m) * x / (a + 2.0 * m - 1.0) } else { 0.0 };
-            m + middle + (a + m) * (1.0 - excess + m * (2.0 - x)) / (a + 2.0 * m + 1.0)
+            m + middle + (a + m) / (a + 2.0 * m + 1.0) * (1.0 - excess + m * (2.0 - x))
         };
         let numerator = |m: f64| {
             let scale = a + 2.0 * m - 1.0;
@@ -124,7 +140,7 @@ pub(super) fn lentz(numerator: impl Fn(f64) -> f64, denominator: impl Fn(f64) ->
         upper = nudge(below + above / upper);
         let change = upper * lower;
         value *= change;
-        if (change - 1.0).abs() <= f64::EPSILON {
+        if (change - 1.0).abs() <= f64::EPSILON || change.is_nan() {
             break;
         }
         m += 1.0;

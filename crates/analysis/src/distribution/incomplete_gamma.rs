@@ -15,16 +15,16 @@ use super::{Tails, large_parameters};
 pub fn tails(a: f64, x: f64) -> Tails {
     if a.is_nan() || x.is_nan() || a <= 0.0 {
         Tails::UNDEFINED
-    } else if x <= 0.0 {
+    } else if x <= 0.0 || (a.is_infinite() && x.is_finite()) {
         Tails::ALL_ABOVE
     } else if x.is_infinite() {
         Tails::ALL_BELOW
     } else if large_parameters::applies(a, x - a) {
         large_shape(a, x)
     } else if x < a + 1.0 {
-        Tails::from_ln_lower(ln_lower(a, x))
+        Tails::from_ln_lower(ln_density(a, x) - lower_fraction(a, x).ln())
     } else {
-        Tails::from_ln_upper(ln_upper(a, x))
+        Tails::from_ln_upper(ln_density(a, x) - upper_fraction(a, x).ln())
     }
 }
 
@@ -44,23 +44,39 @@ fn large_shape(a: f64, x: f64) -> Tails {
     }
 }
 
-/// The logarithm of the lower tail, for x not far above a.
-fn ln_lower(a: f64, x: f64) -> f64 {
+/// The lower tail over xᵃ e⁻ˣ / Γ(a), without cancellation far out.
+pub(super) fn lower_over_density(a: f64, x: f64) -> f64 {
+    if x < a + 1.0 && !large_parameters::applies(a, x - a) {
+        lower_fraction(a, x).recip()
+    } else {
+        (tails(a, x).lower.ln_p - ln_density(a, x)).exp()
+    }
+}
+
+/// The upper tail over the same quantity.
+pub(super) fn upper_over_density(a: f64, x: f64) -> f64 {
+    if x < a + 1.0 || large_parameters::applies(a, x - a) {
+        (tails(a, x).upper.ln_p - ln_density(a, x)).exp()
+    } else {
+        upper_fraction(a, x).recip()
+    }
+}
+
+/// xᵃ e⁻ˣ / (Γ(a) P(a, x)), for x not far above a.
+fn lower_fraction(a: f64, x: f64) -> f64 {
     let excess = x - a;
     let denominator = |m: f64| {
         let middle = if m > 0.0 { m * x / (a + 2.0 * m - 1.0) } else { 0.0 };
-        m + middle + (a + m) * (1.0 - excess + 2.0 * m) / (a + 2.0 * m + 1.0)
+        m + middle + (a + m) / (a + 2.0 * m + 1.0) * (1.0 - excess + 2.0 * m)
     };
     let numerator = |m: f64| {
         let scale = a + 2.0 * m - 1.0;
-        (a + m - 1.0) * m * (x / scale) * (x / scale)
+        (a + m - 1.0) / scale * m * x * (x / scale)
     };
-    ln_density(a, x) - lentz(numerator, denominator).ln()
+    lentz(numerator, denominator)
 }
 
-/// The logarithm of the upper tail, for x above a.
-fn ln_upper(a: f64, x: f64) -> f64 {
-    let excess = x - a;
-    let fraction = lentz(|m| m * (a - m), |m| excess + 1.0 + 2.0 * m);
-    ln_density(a, x) - fraction.ln()
+/// xᵃ e⁻ˣ / (Γ(a) Q(a, x)), for x above a.
+fn upper_fraction(a: f64, x: f64) -> f64 {
+    lentz(|m| m * (a - m), |m| x - a + 1.0 + 2.0 * m)
 }

@@ -1,7 +1,7 @@
 //! Incomplete beta and gamma functions near the centre of the law where the parameters are so
 //! large that a continued fraction would take thousands of steps.
 
-use std::f64::consts::{FRAC_1_SQRT_2, PI};
+use std::f64::consts::{FRAC_1_SQRT_2, PI, SQRT_2};
 
 use super::normal::scaled_erfc;
 use super::stirling::stirling_error;
@@ -10,7 +10,7 @@ use super::stirling::stirling_error;
 const SMALLEST: f64 = 3000.0;
 /// How far from the centre, as a part of the smaller parameter, the expansion is used.
 const REACH: f64 = 0.03;
-/// Terms of the expansion, an even number.
+/// The most terms of the expansion that are taken.
 const TERMS: usize = 20;
 
 /// Whether the expansion applies, for the smaller parameter and the distance from the centre
@@ -51,81 +51,97 @@ struct Shape {
 
 /// The sum of the expansion; `scale` is its small quantity.
 fn expansion(shape: Shape, scale: f64, deviance: f64) -> f64 {
-    let coefficients = coefficients(shape);
     let root = deviance.sqrt();
-    let step = 2.0 * deviance;
-    let (even_start, odd_start) = (0.5 * PI.sqrt() * 0.5 * scaled_erfc(root), 0.5 * FRAC_1_SQRT_2);
-    let (mut even, mut odd) = (even_start, odd_start);
-    let (mut even_power, mut odd_power) = (2.0 * FRAC_1_SQRT_2 * root, step);
-    let mut power = scale;
-    let mut sum = even;
-    for (index, coefficient) in coefficients.iter().enumerate() {
-        let order = index as f64;
-        if index == 0 {
-            sum += coefficient * power * odd;
-            continue;
-        }
-        power *= scale;
-        let integral = if index % 2 == 1 {
-            even = odd_start * even_power + order * even;
-            even_power *= step;
-            even
-        } else {
-            odd = odd_start * odd_power + order * odd;
-            odd_power *= step;
-            odd
-        };
-        let term = coefficient * power * integral;
+    let half_power = 0.5 * FRAC_1_SQRT_2;
+    // What the latest two coefficients are multiplied by, apart from the power of the scale.
+    let mut previous = 0.25 * PI.sqrt() * scaled_erfc(root);
+    let mut latest = half_power;
+    // Powers of √(2 deviance).
+    let mut power = 1.0;
+    let mut sum = previous;
+    let mut last_term = f64::INFINITY;
+    let mut weight = scale;
+    for (order, coefficient) in (1_u32..).zip(Coefficients::new(shape)) {
+        let term = coefficient * weight * latest;
         sum += term;
-        if index % 2 == 0 && term.abs() <= 1e-18 * sum {
+        // Where both parameters are equal every second term is 0, so two must be negligible.
+        if term.abs() + last_term <= 1e-18 * sum {
             break;
         }
+        last_term = term.abs();
+        power *= SQRT_2 * root;
+        weight *= scale;
+        (previous, latest) = (latest, half_power * power + f64::from(order) * previous);
     }
     sum
 }
 
-/// The coefficients d₁, d₂, … of the expansion.
-#[allow(clippy::indexing_slicing, reason = "every index stays below the fixed length")]
-fn coefficients(shape: Shape) -> [f64; TERMS + 1] {
-    let mut series = [0.0; TERMS + 1];
-    let mut reverted = [0.0; TERMS + 1];
-    let mut result = [0.0; TERMS + 1];
-    let square = shape.ratio * shape.ratio;
-    let spread = (1.0 + shape.ratio).recip();
-    series[0] = 2.0 / 3.0 * shape.symmetry;
-    reverted[0] = -0.5 * series[0];
-    result[0] = -reverted[0];
-    let mut sum = 1.0;
-    let mut power = 1.0;
-    for n in (2..=TERMS).step_by(2) {
-        power *= square;
-        let order = n as f64;
-        series[n - 1] = 2.0 * spread * (1.0 + shape.ratio * power) / (order + 2.0);
-        sum += power;
-        series[n] = 2.0 * shape.symmetry * sum / (order + 3.0);
-        for i in n..=n + 1 {
-            reverted[i - 1] = power_coefficient(&series, i) / (i as f64 + 1.0);
-            let products: f64 = (1..i).map(|j| result[i - j - 1] * reverted[j - 1]).sum();
-            result[i - 1] = -(products + reverted[i - 1]);
-        }
-    }
-    result
+/// The coefficients of the expansion, d₁, d₂, …, each computed when it is asked for, because the
+/// later ones are dear and seldom needed.
+struct Coefficients {
+    shape: Shape,
+    /// The coefficients of the series that is reverted.
+    series: Vec<f64>,
+    /// The coefficients of the reversion.
+    reverted: Vec<f64>,
+    /// The coefficients that were given out.
+    given: Vec<f64>,
+    /// The ratio of the parameters to the power of the latest even order.
+    power: f64,
+    /// The sum of these powers.
+    sum: f64,
 }
 
-/// The coefficient of order `i` of the series raised to the power −(i + 1)/2.
-#[allow(clippy::indexing_slicing, reason = "every index stays below the fixed length")]
-fn power_coefficient(series: &[f64; TERMS + 1], i: usize) -> f64 {
-    let exponent = -0.5 * (i as f64 + 1.0);
-    let mut powers = [0.0; TERMS + 1];
-    powers[0] = exponent * series[0];
-    for m in 2..=i {
-        let products: f64 = (1..m)
-            .map(|j| {
-                let (j_term, rest) = (j as f64, (m - j) as f64);
-                (j_term * exponent - rest) * series[j - 1] * powers[m - j - 1]
-            })
-            .sum();
-        powers[m - 1] = exponent * series[m - 1] + products / m as f64;
+impl Coefficients {
+    fn new(shape: Shape) -> Self {
+        let empty = || Vec::with_capacity(TERMS);
+        Self { shape, series: empty(), reverted: empty(), given: empty(), power: 1.0, sum: 0.0 }
     }
-    powers[i - 1]
+
+    /// The coefficient of the series that is reverted, of the given `order`, the first being 0.
+    fn series_term(&mut self, order: usize) -> f64 {
+        let Shape { ratio, symmetry } = self.shape;
+        let divisor = order as f64 + 3.0;
+        if order.is_multiple_of(2) {
+            self.sum += self.power;
+            2.0 * symmetry * self.sum / divisor
+        } else {
+            self.power *= ratio * ratio;
+            2.0 * (1.0 + ratio * self.power) / ((1.0 + ratio) * divisor)
+        }
+    }
+}
+
+impl Iterator for Coefficients {
+    type Item = f64;
+
+    fn next(&mut self) -> Option<f64> {
+        let order = self.given.len() + 1;
+        if order > TERMS {
+            return None;
+        }
+        let term = self.series_term(order - 1);
+        self.series.push(term);
+        let exponent = -0.5 * (order as f64 + 1.0);
+        let reverted = last_power_coefficient(&self.series, exponent) / (order as f64 + 1.0);
+        let products: f64 =
+            self.given.iter().rev().zip(&self.reverted).map(|(one, other)| one * other).sum();
+        self.reverted.push(reverted);
+        self.given.push(-(products + reverted));
+        self.given.last().copied()
+    }
+}
+
+/// The last coefficient of 1 + the series, raised to the power `exponent`, as far as the series is
+/// given.
+fn last_power_coefficient(series: &[f64], exponent: f64) -> f64 {
+    let mut powers: Vec<f64> = Vec::with_capacity(series.len());
+    for (order, term) in (1_u32..).zip(series) {
+        let products: f64 = (1_u32..)
+            .zip(series.iter().zip(powers.iter().rev()))
+            .map(|(j, (one, other))| (f64::from(j) * exponent - f64::from(order - j)) * one * other)
+            .sum();
+        powers.push(exponent * term + products / f64::from(order));
+    }
+    powers.last().copied().unwrap_or(1.0)
 }

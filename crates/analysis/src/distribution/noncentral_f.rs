@@ -7,6 +7,9 @@ use super::root::Bracket;
 use super::{Tails, central_f};
 use crate::test::{Interval, PValue};
 
+/// The largest mean of the Poisson counts; beyond it intermediate values would overflow.
+const LARGEST_MEAN: f64 = 1e305;
+
 /// P(F ≤ f) with `df1` and `df2` degrees of freedom and noncentrality `lambda`.
 pub fn cumulative(f: f64, df1: f64, df2: f64, lambda: f64) -> PValue {
     tails(f, df1, df2, lambda).lower
@@ -25,7 +28,8 @@ pub fn tails(f: f64, df1: f64, df2: f64, lambda: f64) -> Tails {
         return Tails::UNDEFINED;
     }
     let central = central_f::tails(f, df1, df2);
-    if f.is_nan() || f <= 0.0 || f.is_infinite() || lambda == 0.0 || df1.is_infinite() {
+    let mean = (0.5 * lambda).min(LARGEST_MEAN);
+    if central.lower.p.is_nan() || f <= 0.0 || f.is_infinite() || mean == 0.0 || df1.is_infinite() {
         return central;
     }
     if lambda.is_infinite() {
@@ -36,8 +40,12 @@ pub fn tails(f: f64, df1: f64, df2: f64, lambda: f64) -> Tails {
     } else {
         Law::Beta(central_f::beta_point(f, df1, df2))
     };
+    if law.is_at_end() {
+        // The point is so close to an end that only its rounded place, the end, is known.
+        return central;
+    }
     let side = if f * df1 < df1 + lambda { Side::Lower } else { Side::Upper };
-    PoissonMixture { law, mean: 0.5 * lambda, side }.tails()
+    PoissonMixture { law, mean, side }.tails()
 }
 
 /// The limits of lambda that go with an observed `f`: the equal-tailed interval at `level`.
@@ -46,12 +54,16 @@ pub fn tails(f: f64, df1: f64, df2: f64, lambda: f64) -> Tails {
 /// smaller one; a limit is 0 where no lambda makes that chance so small (Steiger 2004, Psych.
 /// Methods 9:164).
 pub fn limits(f: f64, df1: f64, df2: f64, level: f64) -> Interval {
-    if f.is_nan() || df1.is_nan() || df2.is_nan() || !(0.0..=1.0).contains(&level) {
+    let valid = !f.is_nan() && df1 > 0.0 && df2 > 0.0 && (0.0..=1.0).contains(&level);
+    if !valid {
         return Interval { lower: f64::NAN, upper: f64::NAN };
     }
     let ln_tail = (0.5 * (1.0 - level)).ln();
     if f == f64::INFINITY {
         return Interval { lower: f, upper: f };
+    }
+    if ln_tail == f64::NEG_INFINITY {
+        return Interval { lower: 0.0, upper: f64::INFINITY };
     }
     Interval {
         lower: limit(f, df1, df2, |lambda| ln_tail - survival(f, df1, df2, lambda).ln_p),
@@ -64,9 +76,13 @@ fn limit(f: f64, df1: f64, df2: f64, falling: impl Fn(f64) -> f64) -> f64 {
     if falling(0.0) <= 0.0 {
         return 0.0;
     }
-    let centre = (df1 * (f - 1.0)).max(0.0);
+    if df1.is_infinite() {
+        // No finite lambda is felt beside the degrees of freedom.
+        return f64::INFINITY;
+    }
+    let centre = (df1 * (f - 1.0)).clamp(0.0, LARGEST_MEAN);
     // About the standard error of the estimate of lambda.
-    let spread = (2.0 * (df1 + 2.0 * centre) + 2.0 * (df1 + centre) * (df1 + centre) / df2).sqrt();
+    let spread = (2.0 * df1 + 4.0 * centre).sqrt().hypot((df1 + centre) * (2.0 / df2).sqrt());
     let (step, bound) =
         if falling(centre) > 0.0 { (spread, f64::INFINITY) } else { (-spread, 0.0) };
     Bracket::reaching(centre, step, bound, &falling).map_or(bound, |bracket| bracket.zero(&falling))

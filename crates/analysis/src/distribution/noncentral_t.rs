@@ -8,8 +8,18 @@ use std::f64::consts::PI;
 
 use super::root::Bracket;
 use super::stirling::{exp_gap, stirling_error};
-use super::{Tails, normal};
+use super::{Tails, incomplete_gamma, normal};
 use crate::test::{Interval, PValue};
+
+/// The ratio of |δ| to the larger of 1 and √df from which the normal part of T does not spread it.
+const NO_SPREAD_FROM: f64 = 1e10;
+
+/// The size of the logarithm of the peak from which the shape of the integrand changes none of its
+/// digits.
+const ONLY_PEAK_FROM: f64 = 1e15;
+
+/// The largest delta from which a limit is sought; twice as much must not overflow.
+const LARGEST_START: f64 = 1e300;
 
 /// P(T ≤ t) with `df` degrees of freedom and noncentrality `delta`.
 pub fn cumulative(t: f64, df: f64, delta: f64) -> PValue {
@@ -32,6 +42,10 @@ pub fn tails(t: f64, df: f64, delta: f64) -> Tails {
         Tails::ALL_BELOW
     } else if t == f64::NEG_INFINITY || delta == f64::INFINITY {
         Tails::ALL_ABOVE
+    } else if t * delta > 0.0 && delta.abs() > NO_SPREAD_FROM * df.sqrt().max(1.0) {
+        // T ≤ t where S ≥ δ/t, or S ≤ δ/t for negative t.
+        let chi_square = incomplete_gamma::tails(0.5 * df, 0.5 * df * (delta / t) * (delta / t));
+        if t > 0.0 { chi_square.swapped() } else { chi_square }
     } else if t < delta {
         Tails::from_ln_lower(ln_lower(t, df, delta))
     } else {
@@ -59,10 +73,11 @@ fn upper_limit(t: f64, df: f64, ln_tail: f64) -> f64 {
     }
     let excess = |delta: f64| cumulative(t, df, delta).ln_p - ln_tail;
     // About the standard error of t as an estimate of delta.
-    let step = 1.0_f64.hypot(t / (2.0 * df).sqrt());
+    let step = 1.0_f64.hypot(t / (2.0 * df).sqrt()).min(LARGEST_START);
+    let start = t.clamp(-LARGEST_START, LARGEST_START);
     let (step, bound) =
-        if excess(t) > 0.0 { (step, f64::INFINITY) } else { (-step, f64::NEG_INFINITY) };
-    Bracket::reaching(t, step, bound, excess).map_or(bound, |bracket| bracket.zero(excess))
+        if excess(start) > 0.0 { (step, f64::INFINITY) } else { (-step, f64::NEG_INFINITY) };
+    Bracket::reaching(start, step, bound, excess).map_or(bound, |bracket| bracket.zero(excess))
 }
 
 /// ln P(T ≤ t).
@@ -93,9 +108,9 @@ impl Integrand {
     /// t eᵛ − δ.
     fn normal_argument(self, v: f64) -> f64 {
         if v.abs() < 0.5 {
-            self.t.mul_add(v.exp_m1(), self.t - self.delta)
+            self.t * v.exp_m1() + (self.t - self.delta)
         } else {
-            self.t.mul_add(v.exp(), -self.delta)
+            self.t * v.exp() - self.delta
         }
     }
 
@@ -123,57 +138,63 @@ impl Integrand {
             .map_or(bound, |bracket| bracket.zero(|v| self.slope(v)))
     }
 
-    /// The width of the integrand at its mode: the curvature of its logarithm to the power −½.
-    fn width(self, mode: f64) -> f64 {
+    /// The finest scale of the integrand near its mode: its own width there, from the curvature of
+    /// the logarithm, or the width of the edge that Φ makes, if that is sharper.
+    fn scale(self, mode: f64) -> f64 {
         let z = self.normal_argument(mode);
         let slope = normal::ln_cumulative_slope(z);
         let bend = (slope * (z + slope)).clamp(0.0, 1.0);
-        let scale = self.t * mode.exp();
-        (self.df * ((2.0 * mode).exp() + 1.0) + scale * scale * bend).sqrt().recip()
+        let sharpness = (self.t * mode.exp()).abs();
+        let curvature = self.df * ((2.0 * mode).exp() + 1.0) + sharpness * sharpness * bend;
+        curvature.sqrt().max(sharpness).recip()
     }
 
     /// The logarithm of the integral with the constant of the density.
     ///
-    /// The trapezoidal rule after v = mode + width sinh u, which resolves a sharp edge at the mode
+    /// The trapezoidal rule after v = mode + scale sinh u, which resolves a sharp edge near the mode
     /// and reaches far on its flat side. The rule converges exponentially for such an integrand
     /// (Trefethen & Weideman 2014, SIAM Rev. 56:385): a change of 10⁻⁹ from one halving of the step
     /// to the next leaves an error far below the last digit.
     fn ln_integral(self) -> f64 {
         let mode = self.mode();
-        let width = self.width(mode);
+        let scale = self.scale(mode);
         let peak = self.ln_value(mode);
-        let height =
-            |u: f64| (self.ln_value(width.mul_add(u.sinh(), mode)) - peak).exp() * u.cosh();
+        let constant = 0.5 * (self.df / PI).ln() - stirling_error(0.5 * self.df);
+        if peak.abs() > ONLY_PEAK_FROM {
+            return constant + peak + scale.ln();
+        }
+        let height = |u: f64| (self.ln_value(mode + scale * u.sinh()) - peak).exp() * u.cosh();
+        // Rounding in the logarithm of a far tail or at a very sharp edge can be larger than that.
+        let noise = 4.0 * f64::EPSILON * (peak.abs() + self.delta.abs());
+        let tolerance = noise.max(1e-9);
         let mut step = 0.5;
         let mut sum = 1.0 + both_sides(step, step, height);
         for _ in 0..12 {
             let finer = sum + both_sides(0.5 * step, step, height);
             step *= 0.5;
-            let settled = (finer - 2.0 * sum).abs() <= 1e-9 * finer;
+            let settled = (finer - 2.0 * sum).abs() <= tolerance * finer;
             sum = finer;
             if settled {
                 break;
             }
         }
-        let constant = 0.5 * (self.df / PI).ln() - stirling_error(0.5 * self.df);
-        constant + peak + (sum * step * width).ln()
+        constant + peak + (sum * step * scale).ln()
     }
 }
 
 /// The sum of `height` at ±`first`, ±(`first` + `step`), … until it vanishes.
 fn both_sides(first: f64, step: f64, height: impl Fn(f64) -> f64) -> f64 {
     let side = |sign: f64| {
-        let mut sum = 0.0;
         let mut u = first;
-        loop {
-            let term = height(sign * u);
-            sum += term;
-            // Past 1 the heights fall, faster and faster.
-            if u > 1.0 && term <= 1e-20 {
-                return sum;
-            }
+        let mut term = height(sign * u);
+        let mut sum = term;
+        // Past 1 the heights fall, faster and faster.
+        while u <= 1.0 || term > 1e-20 {
             u += step;
+            term = height(sign * u);
+            sum += term;
         }
+        sum
     };
     side(1.0) + side(-1.0)
 }

@@ -13,6 +13,8 @@ use super::{Tails, incomplete_gamma};
 const EVERY_TERM_UP_TO: f64 = 1e4;
 /// The mean from which the relative spread of the counts is below the last digit.
 const NO_SPREAD_FROM: f64 = 1e28;
+/// The size of the logarithm of the largest term from which the others change none of its digits.
+const ONE_TERM_FROM: f64 = 1e15;
 /// Part of the largest weight, or of the sum, below which terms are left out.
 const NEGLIGIBLE: f64 = 1e-20;
 
@@ -31,6 +33,14 @@ pub(super) enum Law {
 }
 
 impl Law {
+    /// Whether the point is an end of the range of the law.
+    pub(super) fn is_at_end(self) -> bool {
+        match self {
+            Self::Beta(point) => point.x <= 0.0 || point.y <= 0.0,
+            Self::Gamma { x, .. } => x <= 0.0 || x.is_infinite(),
+        }
+    }
+
     /// The law with its first parameter raised by `count`.
     fn raised(self, count: f64) -> Self {
         match self {
@@ -43,6 +53,15 @@ impl Law {
         }
     }
 
+    /// The logarithm of one tail.
+    fn ln_tail(self, side: Side) -> f64 {
+        let tails = self.tails();
+        match side {
+            Side::Lower => tails.lower.ln_p,
+            Side::Upper => tails.upper.ln_p,
+        }
+    }
+
     /// Both tails at the point.
     fn tails(self) -> Tails {
         match self {
@@ -51,7 +70,7 @@ impl Law {
         }
     }
 
-    /// The logarithm of what the lower tail loses when the first parameter is raised by 1
+    /// The logarithm of the step: what the lower tail loses when the first parameter is raised by 1
     /// (Abramowitz & Stegun 1964, 26.5.16 and 6.5.21).
     fn ln_step(self) -> f64 {
         match self {
@@ -60,7 +79,17 @@ impl Law {
         }
     }
 
-    /// The next such step over this one.
+    /// One tail over the step.
+    fn tail_over_step(self, side: Side) -> f64 {
+        match (self, side) {
+            (Self::Beta(point), Side::Lower) => point.a * point.lower_over_density(),
+            (Self::Beta(point), Side::Upper) => point.a * point.upper_over_density(),
+            (Self::Gamma { a, x }, Side::Lower) => a * incomplete_gamma::lower_over_density(a, x),
+            (Self::Gamma { a, x }, Side::Upper) => a * incomplete_gamma::upper_over_density(a, x),
+        }
+    }
+
+    /// The next step over this one.
     fn step_ratio(self) -> f64 {
         match self {
             Self::Beta(point) => point.x * ((point.a + point.b) / (point.a + 1.0)),
@@ -92,14 +121,11 @@ pub(super) struct PoissonMixture {
 impl PoissonMixture {
     /// Both tails of the mixture.
     pub(super) fn tails(self) -> Tails {
-        if self.mean >= NO_SPREAD_FROM {
-            return self.law.raised(self.mean).tails();
-        }
         let peak = self.product_peak();
         let ln_tail = match self.side {
             Side::Lower if peak <= EVERY_TERM_UP_TO => self.lower_by_recurrence(peak),
             Side::Upper if peak <= EVERY_TERM_UP_TO => self.upper_by_recurrence(peak),
-            Side::Lower | Side::Upper => self.by_stride(),
+            Side::Lower | Side::Upper => self.by_stride(peak),
         };
         match self.side {
             Side::Lower => Tails::from_ln_lower(ln_tail),
@@ -131,7 +157,7 @@ impl PoissonMixture {
 
     /// The logarithm of the sum of weight times lower tail.
     ///
-    /// With t the steps of [`Law::ln_step`], lower(j)/t(j) = 1 + lower(j + 1)/t(j + 1) · t(j + 1)/t(j):
+    /// With t(j) the steps, lower(j)/t(j) = 1 + lower(j + 1)/t(j + 1) · t(j + 1)/t(j):
     /// downwards in j only positive numbers are added.
     fn lower_by_recurrence(self, peak: f64) -> f64 {
         let mut count = peak;
@@ -144,18 +170,15 @@ impl PoissonMixture {
             product = next;
             count += 1.0;
         }
-        let top = self.law.raised(count);
-        let mut tail = (top.tails().lower.ln_p - top.ln_step()).exp();
-        let mut sum = product * tail;
-        while count > 0.0 {
+        let mut tail = self.law.raised(count).tail_over_step(Side::Lower);
+        let mut term = product * tail;
+        let mut sum = term;
+        while count > 0.0 && (count >= peak || term >= NEGLIGIBLE * sum) {
             count -= 1.0;
             product /= self.product_ratio(count);
             tail = 1.0 + tail * self.law.raised(count).step_ratio();
-            let term = product * tail;
+            term = product * tail;
             sum += term;
-            if count < peak && term < NEGLIGIBLE * sum {
-                break;
-            }
         }
         sum.ln() + self.ln_product(peak)
     }
@@ -174,19 +197,17 @@ impl PoissonMixture {
             product = next;
             count -= 1.0;
         }
-        let bottom = self.law.raised(count);
-        let mut tail = (bottom.tails().upper.ln_p - bottom.ln_step()).exp();
-        let mut sum = product * tail;
-        loop {
+        let mut tail = self.law.raised(count).tail_over_step(Side::Upper);
+        let mut term = product * tail;
+        let mut sum = term;
+        while count <= peak || term >= NEGLIGIBLE * sum {
             product *= self.product_ratio(count);
             tail = (tail + 1.0) / self.law.raised(count).step_ratio();
             count += 1.0;
-            let term = product * tail;
+            term = product * tail;
             sum += term;
-            if count > peak && term < NEGLIGIBLE * sum {
-                return sum.ln() + self.ln_product(peak);
-            }
         }
+        sum.ln() + self.ln_product(peak)
     }
 
     /// The logarithm of weight times step.
@@ -200,19 +221,23 @@ impl PoissonMixture {
     /// its width differs from the whole sum by less than the last digit, by the same argument as the
     /// trapezoidal rule (Trefethen & Weideman 2014, SIAM Rev. 56:385). A third of the root of the
     /// count is at most half of the width.
-    fn by_stride(self) -> f64 {
-        let mode = self.term_peak();
+    fn by_stride(self, product_peak: f64) -> f64 {
+        let mode = self.term_peak(product_peak);
         let stride = (mode.sqrt() / 3.0).floor().max(1.0);
         let peak = self.ln_term(mode);
+        if peak.abs() > ONE_TERM_FROM {
+            return peak;
+        }
+        if self.mean >= NO_SPREAD_FROM {
+            return self.law.raised(self.mean).ln_tail(self.side);
+        }
         let mut sum = 1.0;
         for direction in [-stride, stride] {
             let mut count = mode + direction;
-            while count >= 0.0 {
-                let term = (self.ln_term(count) - peak).exp();
+            let mut term = 1.0;
+            while count >= 0.0 && term >= NEGLIGIBLE {
+                term = (self.ln_term(count) - peak).exp();
                 sum += term;
-                if term < NEGLIGIBLE {
-                    break;
-                }
                 count += direction;
             }
         }
@@ -221,35 +246,27 @@ impl PoissonMixture {
 
     /// The logarithm of weight times tail.
     fn ln_term(self, count: f64) -> f64 {
-        ln_poisson(count, self.mean) + self.ln_tail(self.law.raised(count))
+        ln_poisson(count, self.mean) + self.law.raised(count).ln_tail(self.side)
     }
 
-    /// The logarithm of the tail of one law.
-    fn ln_tail(self, law: Law) -> f64 {
-        match self.side {
-            Side::Lower => law.tails().lower.ln_p,
-            Side::Upper => law.tails().upper.ln_p,
-        }
-    }
-
-    /// The whole count near which weight times tail is largest.
-    fn term_peak(self) -> f64 {
+    /// The whole count near which weight times tail is largest, which is not far from where weight
+    /// times step is, or from the mean.
+    fn term_peak(self, product_peak: f64) -> f64 {
         // The logarithm of the next term over the one at `count`.
         let slope = |count: f64| {
-            let law = self.law.raised(count);
-            let relative_step = (law.ln_step() - self.ln_tail(law)).exp();
-            let tail_growth = match self.side {
+            let relative_step = self.law.raised(count).tail_over_step(self.side).recip();
+            let growth = match self.side {
                 Side::Lower => -relative_step.min(1.0),
                 Side::Upper => relative_step,
             };
-            (self.mean / (count + 1.0)).ln() + tail_growth.ln_1p()
+            (self.mean / (count + 1.0)).ln() + growth.ln_1p()
         };
+        // At the mean the lower terms fall already; a count before it the upper terms still rise.
         let step = self.mean.sqrt();
-        let (step, bound) = match self.side {
-            Side::Lower => (-step, 0.0),
-            Side::Upper => (step, f64::INFINITY),
+        let (start, step, bound) = match self.side {
+            Side::Lower => (self.mean, -step, 0.0),
+            Side::Upper => ((self.mean - 1.0).max(0.0), step, 1e3 * self.mean.max(product_peak)),
         };
-        let start = self.mean;
         Bracket::reaching(start, step, bound, slope)
             .map_or(bound.min(start), |bracket| bracket.zero(slope))
             .round()

@@ -24,16 +24,18 @@ impl Bracket {
         bound: f64,
         function: impl Fn(f64) -> f64,
     ) -> Option<Self> {
+        // The width of a bracket between the bounds must be a finite number.
+        let bound = bound.clamp(-0.5 * f64::MAX, 0.5 * f64::MAX);
         let mut first = Sample { at: start, value: function(start) };
-        let mut step = step;
+        let mut step = step.abs().max(f64::EPSILON * start.abs()).copysign(step);
         loop {
             let next = first.at + step;
             let at = if (next - bound) * step >= 0.0 { bound } else { next };
             let second = Sample { at, value: function(at) };
-            if first.value * second.value <= 0.0 || first.value.signum() != second.value.signum() {
+            if first.value == 0.0 || first.value.signum() != second.value.signum() {
                 return Some(Self { first, second });
             }
-            if at == bound || !at.is_finite() {
+            if at == bound {
                 return None;
             }
             first = second;
@@ -44,11 +46,11 @@ impl Bracket {
     /// The zero between the ends, to the last digits of a double.
     ///
     /// Inverse quadratic interpolation where the three latest points allow it and bisection
-    /// otherwise (Chandrupatla 1997, Adv. Eng. Softw. 28:145).
+    /// otherwise, with the change of sign kept between the ends (Chandrupatla 1997, Adv. Eng. Softw.
+    /// 28:145).
     pub(super) fn zero(self, function: impl Fn(f64) -> f64) -> f64 {
         let Self { first: mut newest, second: mut opposite } = self;
-        let mut previous = opposite;
-        let mut fraction = 0.5;
+        let mut fraction: f64 = 0.5;
         // Bisection alone needs about 1100 halvings for the widest bracket of doubles.
         for _ in 0..2200 {
             let best = if newest.value.abs() < opposite.value.abs() { newest } else { opposite };
@@ -58,20 +60,18 @@ impl Bracket {
                 return best.at;
             }
             let least = (tolerance / width).min(0.5);
-            let fraction_kept: f64 = fraction;
-            let at =
-                newest.at + fraction_kept.clamp(least, 1.0 - least) * (opposite.at - newest.at);
+            let part = fraction.clamp(least, 1.0 - least);
+            let at = newest.at + part * (opposite.at - newest.at);
             let trial = Sample { at, value: function(at) };
-            if trial.value.signum() == newest.value.signum() {
-                previous = newest;
+            let previous = if trial.value.signum() == newest.value.signum() {
+                newest
             } else {
-                previous = opposite;
-                opposite = newest;
-            }
+                std::mem::replace(&mut opposite, newest)
+            };
             newest = trial;
             fraction = next_fraction(newest, opposite, previous);
         }
-        newest.at
+        if newest.value.abs() < opposite.value.abs() { newest.at } else { opposite.at }
     }
 }
 

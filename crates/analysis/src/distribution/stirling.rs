@@ -80,10 +80,8 @@ pub(super) fn exp_gap(u: f64) -> f64 {
     if u.abs() > 0.5 {
         return u.exp_m1() - u;
     }
-    (3..=18)
-        .rev()
-        .fold(0.0, |rest, k| (rest + 1.0) * u / f64::from(k))
-        .mul_add(0.5 * u * u, 0.5 * u * u)
+    let rest = (3..=18).rev().fold(0.0, |rest, k| (rest + 1.0) * u / f64::from(k));
+    0.5 * u * u * (1.0 + rest)
 }
 
 /// The logarithm of the Poisson probability of `count`, which may be fractional, where `mean` is
@@ -92,7 +90,8 @@ pub(super) fn ln_poisson(count: f64, mean: f64) -> f64 {
     if count <= 0.0 {
         return -mean;
     }
-    -0.5 * (2.0 * PI * count).ln() - stirling_error(count) - deviance(count, mean - count, mean)
+    let size = (2.0 * PI).ln() + count.ln();
+    -0.5 * size - stirling_error(count) - deviance(count, mean - count, mean)
 }
 
 /// e − p − p ln(e/p), the deviance of `expected` e from `parameter` p, with their difference given

@@ -27,10 +27,10 @@ pub fn quantile(probability: f64, df: f64) -> f64 {
     if !(0.0..=1.0).contains(&probability) || df.is_nan() || df <= 0.0 {
         return f64::NAN;
     }
-    if probability > 0.5 {
-        return upper_quantile(1.0 - probability, df);
+    if probability < 0.5 {
+        return -upper_quantile(probability, df);
     }
-    -upper_quantile(probability, df)
+    upper_quantile(1.0 - probability, df)
 }
 
 /// The value that is exceeded with probability `tail`, which is at most ½.
@@ -66,7 +66,7 @@ fn central(t: f64, df: f64) -> Tails {
         return Tails::ALL_BELOW;
     }
     if df.is_infinite() {
-        return Tails::from_ln_upper(normal::two_sided(t).ln_p);
+        return normal::central(t);
     }
     let square = t * t;
     let (x, y) = (square / (square + df), df / (square + df));

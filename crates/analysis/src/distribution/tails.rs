@@ -30,7 +30,7 @@ impl Tails {
     /// Both tails from the logarithm of the lower one.
     pub(super) fn from_ln_lower(ln_lower: f64) -> Self {
         // Rounding may push the logarithm of a probability of 1 above 0.
-        let ln_lower = ln_lower.min(0.0);
+        let ln_lower = if ln_lower > 0.0 { 0.0 } else { ln_lower };
         let lower = PValue { p: ln_lower.exp(), ln_p: ln_lower };
         let complement = -ln_lower.exp_m1();
         let ln_complement = if lower.p < 0.5 { (-lower.p).ln_1p() } else { complement.ln() };
