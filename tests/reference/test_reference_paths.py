@@ -52,8 +52,9 @@ def expected_paths(groups):
     pairs = list(itertools.combinations(names, 2))
     functions = range(1, min(len(OUTCOMES), groups - 1) + 1)
     test = ("F", "df1", "df2", "p", "ln_p")
-    paths = [("flow", "read", "rows"), *(("flow", "read", level) for level in names)]
-    paths += [("flow", "analysed", key) for key in ("rows", "left_out", *names)]
+    paths = [("flow", "read", "rows"), *(("flow", "read", "groups", level) for level in names)]
+    paths += [("flow", "analysed", key) for key in ("rows", "left_out")]
+    paths += [("flow", "analysed", "groups", level) for level in names]
     for level in names:
         paths.append(("groups", level, "n"))
         for outcome, key in itertools.product(OUTCOMES, ("mean", "sd", "se", "lower", "upper")):

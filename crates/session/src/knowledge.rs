@@ -16,7 +16,7 @@ use crate::factor::{levels, present};
 use crate::functions;
 use crate::relation::Relation;
 use crate::rules;
-use crate::values::{at, keys_after};
+use crate::values::{at, keys_after, readings};
 use crate::views::{self, Request, Shown, View};
 
 /// Facts about one version of one document.
@@ -68,19 +68,15 @@ impl<'a> Knowledge<'a> {
         shown.ok().map(|shown| (*shown).clone())
     }
 
-    /// The full path of the segments that were written: the term of the design put in.
-    fn full(&self, path: &[String]) -> Option<(Shown, Vec<String>)> {
-        let [comparison, name, keys @ ..] = path else { return None };
+    /// What a path may stand for, and the view that holds it.
+    fn readings(&self, path: &[String]) -> Option<(Shown, Vec<Vec<String>>)> {
+        let [comparison, name, ..] = path else { return None };
         let view = views::find(name)?;
         let shown = self.shown(comparison, view, None)?;
         let study = self.context().study(comparison, Location::default()).ok()?;
-        let factor = &study.comparison.factor;
-        let mut full = vec![comparison.clone(), name.clone()];
-        if view.by_term() && keys.first() != Some(factor) {
-            full.push(factor.clone());
-        }
-        full.extend(keys.iter().cloned());
-        Some((shown, full))
+        let term = view.by_term().then_some(study.comparison.factor.as_str());
+        let readings = readings(&shown, path, term);
+        Some((shown, readings))
     }
 }
 
@@ -122,24 +118,30 @@ impl Facts for Knowledge<'_> {
             };
             return self.views.iter().map(fact).collect();
         }
-        let Some((shown, full)) = self.full(path) else { return Vec::new() };
-        let fact = |key: String| {
-            let mut whole = full.clone();
-            whole.push(key.clone());
-            let detail = at(&shown, &whole).map(|found| found.rich(None).text());
-            KeyFact { key, detail: detail.unwrap_or_default() }
-        };
-        let mut facts: Vec<KeyFact> = keys_after(&shown, &full).into_iter().map(fact).collect();
-        // The term may be written or left out.
-        if let (true, Some(term)) = (full.len() == path.len() + 1 && path.len() == 2, full.last()) {
-            facts.push(KeyFact { key: term.clone(), detail: "the term of the design".to_owned() });
+        let Some((shown, readings)) = self.readings(path) else { return Vec::new() };
+        let mut facts: Vec<KeyFact> = Vec::new();
+        for full in &readings {
+            for key in keys_after(&shown, full) {
+                let mut whole = full.clone();
+                whole.push(key.clone());
+                let detail = at(&shown, &whole).map(|found| found.rich(None).text());
+                if !facts.iter().any(|fact| fact.key == key) {
+                    facts.push(KeyFact { key, detail: detail.unwrap_or_default() });
+                }
+            }
+            // The term may be written or left out.
+            if let (2, 3, Some(term)) = (path.len(), full.len(), full.last()) {
+                let detail = "the term of the design".to_owned();
+                facts.push(KeyFact { key: term.clone(), detail });
+            }
         }
         facts
     }
 
     fn value(&self, path: &[String]) -> Option<String> {
-        let (shown, full) = self.full(path)?;
-        at(&shown, &full).map(|found| found.rich(None).text())
+        let (shown, readings) = self.readings(path)?;
+        let found = readings.iter().find_map(|full| at(&shown, full))?;
+        Some(found.rich(None).text())
     }
 
     fn coefficients(&self, comparison: &str, kind: &str) -> Option<String> {

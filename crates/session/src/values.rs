@@ -41,19 +41,17 @@ impl Context<'_> {
     pub(crate) fn find(&self, path: &Path, location: Location) -> Answerable<Found> {
         let segments: Vec<String> =
             path.segments.iter().map(|segment| segment.value.clone()).collect();
-        let [comparison, view_name, keys @ ..] = segments.as_slice() else {
+        let [comparison, view_name, ..] = segments.as_slice() else {
             return Err(self.incomplete(&segments, location));
         };
         let view = view(view_name, location)?;
         let shown = self.shown(comparison, view, &self.request(), location)?;
         let study = self.study(comparison, location)?;
-        let factor = &study.comparison.factor;
-        let mut full = vec![comparison.clone(), view_name.clone()];
-        if view.by_term() && keys.first() != Some(factor) {
-            full.push(factor.clone());
-        }
-        full.extend(keys.iter().cloned());
-        lookup(&shown, &full).ok_or_else(|| unknown_path(&shown, &segments, &full, location))
+        let term = view.by_term().then_some(study.comparison.factor.as_str());
+        let readings = readings(&shown, &segments, term);
+        let found = readings.iter().find_map(|full| lookup(&shown, full));
+        let first = readings.first().unwrap_or(&segments);
+        found.ok_or_else(|| unknown_path(&shown, &segments, first, location))
     }
 
     /// Every number of every view of every comparison, by its full path. Views that can't be had
@@ -78,6 +76,30 @@ impl Context<'_> {
     }
 }
 
+/// What a path may stand for, with the term of the design in its place whether it was written or left
+/// out. There are two readings where the term has the name of a level or a key.
+pub(crate) fn readings(shown: &Shown, written: &[String], term: Option<&str>) -> Vec<Vec<String>> {
+    let Some(term) = term else { return vec![written.to_vec()] };
+    let (head, keys) = written.split_at(written.len().min(2));
+    let with_term: Vec<String> =
+        head.iter().cloned().chain([term.to_owned()]).chain(keys.iter().cloned()).collect();
+    let is_written = written.get(2).is_some_and(|key| key == term);
+    if !is_written {
+        return vec![with_term];
+    }
+    let mut readings = vec![written.to_vec()];
+    if leads_on(shown, &with_term) {
+        readings.push(with_term);
+    }
+    readings
+}
+
+/// Whether a path is, or is the beginning of, one that the view holds.
+fn leads_on(shown: &Shown, path: &[String]) -> bool {
+    let cited = shown.citations.iter().map(|cited| cited.path.as_slice());
+    shown.placed().map(|placed| placed.path.as_slice()).chain(cited).any(|p| p.starts_with(path))
+}
+
 fn lookup(shown: &Shown, full: &[String]) -> Option<Found> {
     let number = shown.placed().find(|placed| placed.path == full);
     if let Some(placed) = number {
@@ -96,7 +118,7 @@ fn unknown_path(
 ) -> Box<Diagnostic> {
     let known = (2..=full.len()).rev().find(|&length| {
         let prefix = full.get(..length).unwrap_or_default();
-        shown.placed().any(|placed| placed.path.starts_with(prefix))
+        leads_on(shown, prefix)
     });
     let prefix = known.and_then(|length| full.get(..length)).unwrap_or_default();
     let next = keys_after(shown, prefix);

@@ -181,7 +181,9 @@ fn a_statement_half_typed_stops_only_what_rests_on_it() {
     let folder = Folder::with(&[("t.csv", PLAIN)]);
     let code = "read \"t.csv\" as t\ncompare x, y across g in t as whole\n\
                 compare x, y acr\nshow omnibus of whole\n";
-    assert!(folder.problems(code).contains("error [syntax]"));
+    let told = folder.problems(code);
+    assert!(told.contains("`compare` has no clause `acr`"), "{told}");
+    assert!(told.contains("did you mean `across`?"), "{told}");
     assert_eq!(folder.tables(code), 1);
 }
 
@@ -215,4 +217,16 @@ fn words_that_are_not_built_are_unknown_words() {
     for word in ["adjusting", "report", "seed", "power"] {
         assert!(told.contains(&format!("`{word}`")), "{word} is not told in {told}");
     }
+}
+
+#[test]
+fn pairs_beyond_reading_are_refused_and_the_other_views_answer() {
+    let rows = (0..600).map(|row| format!("k{},{},{}\n", row / 2, row % 7, (row * row) % 11));
+    let text = format!("id,x,y\n{}", rows.collect::<String>());
+    let folder = Folder::with(&[("t.csv", &text)]);
+    let code = omnibus("x, y").replace("across g", "across id");
+    assert_eq!(folder.problems(&code), "");
+    let told = folder.problems(&format!("{code}show pairs of m\n"));
+    assert!(told.contains("[too-many-pairs]: 300 groups make 89700 comparisons"), "{told}");
+    assert!(folder.value(&code, "m.omnibus.id.pillai.F").is_finite());
 }

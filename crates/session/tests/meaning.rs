@@ -133,7 +133,7 @@ show flow of m
     assert_eq!(value("m.flow.analysed.rows"), 12.0);
     assert_eq!(value("m.flow.analysed.left_out"), 1.0);
     assert_eq!(value("m.flow.missing.y.rows"), 1.0);
-    let groups = ["a", "b", "c"].map(|group| value(&format!("m.flow.analysed.{group}")));
+    let groups = ["a", "b", "c"].map(|group| value(&format!("m.flow.analysed.groups.{group}")));
     assert_eq!(groups, [4.0, 4.0, 4.0]);
     let shown = format!("{:?}", folder.answer(code));
     assert!(shown.contains("protocol 3.2 (x >= 8; 1 row left open by a missing value)"), "{shown}");
@@ -192,6 +192,16 @@ fn the_term_may_be_left_out_of_a_path() {
     let words = folder.words(&code);
     let (first, second) = words.last().unwrap().split_once(" Λ").unwrap();
     assert_eq!(first.trim_start_matches('Λ'), second);
+}
+
+#[test]
+fn a_term_with_the_name_of_a_level_is_told_from_it() {
+    let folder = Folder::with(&[("t.csv", &PLAIN.replace("\na,", "\ng,"))]);
+    let code =
+        format!("{SCRIPT}write \"{{{{m.centroids.g.1.mean}}}} {{{{m.centroids.g.g.1.mean}}}}\"\n");
+    let words = folder.words(&code);
+    let (first, second) = words.last().unwrap().split_once(' ').unwrap();
+    assert_eq!(first, second);
 }
 
 #[test]

@@ -282,6 +282,7 @@ impl Parser<'_> {
             .map(Clause::name)
             .collect();
         let near = nearest(word, open.iter().map(String::as_str));
+        let near = near.or_else(|| begun(word, open.iter().map(String::as_str)));
         let error = match (self.kind(), near) {
             (Some(SyntaxKind::Name), Some(near)) => {
                 let message = format!("`{}` has no clause `{word}`", verb.name());
@@ -370,4 +371,10 @@ fn shortened(text: &str) -> String {
     }
     let head: String = line.chars().take(LONGEST).collect();
     format!("{head}…")
+}
+
+/// The clause that a half-typed word is the beginning of.
+fn begun<'a>(word: &str, mut clauses: impl Iterator<Item = &'a str>) -> Option<&'a str> {
+    // Two letters begin too many words.
+    if word.chars().count() < 3 { None } else { clauses.find(|clause| clause.starts_with(word)) }
 }

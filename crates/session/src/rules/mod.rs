@@ -25,6 +25,7 @@ pages![
     "text-in-numeric-column",
     "too-large-values",
     "too-many-outcomes",
+    "too-many-pairs",
     "unlisted-level",
     "unreadable-file",
     "wrong-argument",

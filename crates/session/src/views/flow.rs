@@ -74,7 +74,9 @@ fn count_cells(draft: &Draft, row: Row, count: &Count, keys: &[&str], study: &St
     for (index, level) in study.comparison.levels.iter().enumerate() {
         let size = count.groups.as_ref().and_then(|groups| groups.get(index));
         row = match size {
-            Some(&size) => row.number(draft.place(Value::count(size), &with(keys, level))),
+            Some(&size) => {
+                row.number(draft.place(Value::count(size), &with(&with(keys, "groups"), level)))
+            }
             None => row.empty(),
         };
     }

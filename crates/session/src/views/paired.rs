@@ -4,6 +4,7 @@ use tussock_analysis::multiplicity::{bonferroni, holm};
 use tussock_analysis::pairs::{Pair, Pairs};
 use tussock_analysis::test::PValue;
 use tussock_language::ast::{Adjustment, Effect};
+use tussock_language::diagnostic::Diagnostic;
 use tussock_report::citation::Citation;
 use tussock_report::rich::Rich;
 use tussock_report::table::{Column, Row};
@@ -12,6 +13,26 @@ use tussock_report::value::{NumberStyle, Value};
 use super::draft::{Draft, with};
 use super::wording::{interval_head, pair, percent};
 use crate::policy::Policy;
+use crate::study::Study;
+use crate::trouble::{Answerable, trouble};
+
+/// Beyond this many comparisons a table of pairs serves nobody.
+const MOST_COMPARISONS: usize = 10_000;
+
+/// Refuses a table with too many comparisons, of all pairs of groups on `sets` outcomes or functions.
+pub(super) fn refuse_too_many(study: &Study, sets: usize) -> Answerable<()> {
+    let groups = study.comparison.levels.len();
+    let comparisons = groups * groups.saturating_sub(1) / 2 * sets;
+    if comparisons <= MOST_COMPARISONS {
+        return Ok(());
+    }
+    let message = format!("{groups} groups make {comparisons} comparisons of pairs");
+    let location = study.comparison.factor_location;
+    let found = Diagnostic::error("too-many-pairs", location, message);
+    Err(trouble(
+        found.help("select some groups with `where`, or check that the factor is the right column"),
+    ))
+}
 
 /// The comparisons of a table taken together, in the order of its rows.
 #[derive(Debug)]

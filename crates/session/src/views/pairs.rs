@@ -9,7 +9,7 @@ use tussock_report::table::{Column, Row, Table};
 use tussock_report::value::Value;
 
 use super::draft::Draft;
-use super::paired::{Family, PairCells, effect_symbol, pair_columns, place_pair};
+use super::paired::{Family, PairCells, effect_symbol, pair_columns, place_pair, refuse_too_many};
 use super::wording::{listed, measured, outcome_head};
 use super::{Request, Shown, View};
 use crate::study::Study;
@@ -36,6 +36,7 @@ impl View for Pairs {
         let comparison = &study.comparison;
         let sample = &comparison.sample;
         let policy = &request.policy;
+        refuse_too_many(study, comparison.outcomes.len())?;
         let found: Vec<Option<Found>> = (0..comparison.outcomes.len())
             .map(|index| {
                 let values = sample.outcome(index);

@@ -11,7 +11,7 @@ use tussock_report::table::{Column, Row, Table};
 use tussock_report::value::{NumberStyle, Value};
 
 use super::draft::{Draft, cite_test, with};
-use super::paired::{Family, PairCells, pair_columns, place_pair};
+use super::paired::{Family, PairCells, pair_columns, place_pair, refuse_too_many};
 use super::{Request, Shown, View};
 use crate::policy::Policy;
 use crate::study::Study;
@@ -35,6 +35,7 @@ impl View for Scores {
     }
 
     fn show(&self, study: &Study, request: &Request) -> Answerable<Shown> {
+        refuse_too_many(study, study.hypothesis()?.dimensions())?;
         let mut draft = Draft::of_term(study, PAGE.name);
         let tests = tests(&mut draft, study, &request.policy)?;
         draft.table(tests);
