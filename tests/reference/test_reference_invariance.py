@@ -33,7 +33,7 @@ def agree(before, after, limit=1e-10):
 
 def without_units(values):
     """Values that have no unit: all but means, spreads, raw coefficients and their like."""
-    united = (".groups.", ".correlations.sd.", ".covariances.logdet", ".raw.")
+    united = ("main.groups.", ".correlations.sd.", ".covariances.logdet", ".raw.")
     of_difference = (".difference", ".lower", ".upper")
     return {
         path: value
