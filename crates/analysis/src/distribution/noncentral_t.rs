@@ -14,6 +14,10 @@ use crate::test::{Interval, PValue};
 /// The ratio of |δ| to the larger of 1 and √df from which the normal part of T does not spread it.
 const NO_SPREAD_FROM: f64 = 1e10;
 
+/// The relative change at which an integral counts as settled. It is small because the error can
+/// pass through 0 from one step to the next by chance.
+const SETTLED: f64 = 1e-13;
+
 /// The size of the logarithm of the peak from which the shape of the integrand changes none of its
 /// digits.
 const ONLY_PEAK_FROM: f64 = 1e15;
@@ -152,9 +156,9 @@ impl Integrand {
     /// The logarithm of the integral with the constant of the density.
     ///
     /// The trapezoidal rule after v = mode + scale sinh u, which resolves a sharp edge near the mode
-    /// and reaches far on its flat side. The rule converges exponentially for such an integrand
-    /// (Trefethen & Weideman 2014, SIAM Rev. 56:385): a change of 10⁻⁹ from one halving of the step
-    /// to the next leaves an error far below the last digit.
+    /// and reaches far on its flat side. For such an integrand the error falls exponentially with the
+    /// number of points (Trefethen & Weideman 2014, SIAM Rev. 56:385), so the last change of
+    /// [`SETTLED`] from one halving of the step to the next leaves an error far below that change.
     fn ln_integral(self) -> f64 {
         let mode = self.mode();
         let scale = self.scale(mode);
@@ -163,10 +167,14 @@ impl Integrand {
         if peak.abs() > ONLY_PEAK_FROM {
             return constant + peak + scale.ln();
         }
-        let height = |u: f64| (self.ln_value(mode + scale * u.sinh()) - peak).exp() * u.cosh();
+        let height = |u: f64| {
+            let (rise, fall) = (u.exp(), (-u).exp());
+            let (sinh, cosh) = (0.5 * (rise - fall), 0.5 * (rise + fall));
+            (self.ln_value(mode + scale * sinh) - peak).exp() * cosh
+        };
         // Rounding in the logarithm of a far tail or at a very sharp edge can be larger than that.
         let noise = 4.0 * f64::EPSILON * (peak.abs() + self.delta.abs());
-        let tolerance = noise.max(1e-9);
+        let tolerance = noise.max(SETTLED);
         let mut step = 0.5;
         let mut sum = 1.0 + both_sides(step, step, height);
         for _ in 0..12 {

@@ -23,6 +23,25 @@ const BERNOULLI_QUOTIENTS: [f64; 9] = [
     43_867.0 / 244_188.0,
 ];
 
+/// 1/k! for k = 2 … 16.
+const INVERSE_FACTORIALS: [f64; 15] = [
+    1.0 / 2.0,
+    1.0 / 6.0,
+    1.0 / 24.0,
+    1.0 / 120.0,
+    1.0 / 720.0,
+    1.0 / 5_040.0,
+    1.0 / 40_320.0,
+    1.0 / 362_880.0,
+    1.0 / 3_628_800.0,
+    1.0 / 39_916_800.0,
+    1.0 / 479_001_600.0,
+    1.0 / 6_227_020_800.0,
+    1.0 / 87_178_291_200.0,
+    1.0 / 1_307_674_368_000.0,
+    1.0 / 20_922_789_888_000.0,
+];
+
 /// ln Γ(z) − [(z − ½) ln z − z + ½ ln 2π] for z > 0, to about 10⁻¹⁷ absolutely.
 ///
 /// Below [`ASYMPTOTIC_FROM`] the argument is raised by Gudermann's series, whose terms are all
@@ -80,8 +99,7 @@ pub(super) fn exp_gap(u: f64) -> f64 {
     if u.abs() > 0.5 {
         return u.exp_m1() - u;
     }
-    let rest = (3..=18).rev().fold(0.0, |rest, k| (rest + 1.0) * u / f64::from(k));
-    0.5 * u * u * (1.0 + rest)
+    u * u * INVERSE_FACTORIALS.iter().rev().fold(0.0, |sum, term| sum * u + term)
 }
 
 /// The logarithm of the Poisson probability of `count`, which may be fractional, where `mean` is

@@ -176,7 +176,8 @@ def ln_noncentral_t_lower(t, df, delta):
         peak, width = max((peak - width, peak, peak + width), key=ln_density), width / mpf(1.3)
     top = ln_density(peak)
     bend = -mp.diff(ln_density, peak, 2)
-    step = 1 / mp.sqrt(bend) / 6
+    # The edge that Phi makes may be sharper than the peak.
+    step = min(1 / mp.sqrt(bend), 1 / abs(t * mp.exp(peak))) / 8
 
     def trapezoid(h, shift):
         total = mpf(0)
@@ -237,7 +238,7 @@ POINTS = {
     ],
     "nct": [
         ("-40", "30", "25"), ("-5", "2.5", "60"), ("12", "30", "70"), ("-60", "1e4", "-5"), ("-1000", "12", "-2"),
-        ("3", "7.5", "45"), ("150", "9", "400"),
+        ("3", "7.5", "45"), ("150", "9", "400"), ("28.02443", "4.50003", "35.67"), ("12", "0.61", "8"),
     ],
     "hedges": [("1.5",), ("2",), ("3",), ("10",), ("77.25",), ("1e3",), ("1e6",), ("1e9",), ("1e12",)],
 }
