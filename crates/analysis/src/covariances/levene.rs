@@ -1,5 +1,7 @@
 //! Levene's test of equal variances, about the mean or the median.
 
+use statrs::statistics::{Data, OrderStatistics};
+
 use crate::centring::{centre, check_varies};
 use crate::error::AnalysisError;
 use crate::sample::Sample;
@@ -68,17 +70,10 @@ fn from_medians(residuals: &[f64], codes: &[usize], group_count: usize) -> Vec<f
     let medians: Vec<f64> = (0..group_count)
         .map(|group| {
             let own = residuals.iter().zip(codes).filter(|(_, code)| **code == group);
-            median(own.map(|(residual, _)| *residual).collect())
+            let own: Vec<f64> = own.map(|(residual, _)| *residual).collect();
+            Data::new(own).median()
         })
         .collect();
     let centre = |code: usize| medians.get(code).copied().unwrap_or_default();
     residuals.iter().zip(codes).map(|(residual, &code)| residual - centre(code)).collect()
-}
-
-/// The middle value, or the mean of the two in the middle.
-fn median(mut values: Vec<f64>) -> f64 {
-    values.sort_by(f64::total_cmp);
-    let width = if values.len().is_multiple_of(2) { 2 } else { 1 };
-    let pair = values.iter().skip((values.len() - 1) / 2).take(width);
-    pair.sum::<f64>() / width as f64
 }
